@@ -1,0 +1,16 @@
+module halfvalue
+
+go 1.26
+
+require (
+	codeberg.org/go-pdf/fpdf v0.12.0 // indirect
+	gioui.org v0.10.3 // indirect
+	github.com/alecthomas/kong v1.17.0 // indirect
+	github.com/go-json-experiment/json v1.27.2 // indirect
+	github.com/gowebpki/jcs v1.0.2 // indirect
+	go.etcd.io/bbolt v1.5.0 // indirect
+	golang.org/x/mod v0.43.0 // indirect
+	golang.org/x/sys v0.45.0 // indirect
+	gonum.org/v1/gonum v0.17.0 // indirect
+	rsc.io/qr v0.2.0 // indirect
+)
