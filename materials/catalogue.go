@@ -1,6 +1,7 @@
 package materials
 
 import (
+	"bytes"
 	_ "embed"
 	"encoding/json"
 	"fmt"
@@ -29,8 +30,8 @@ type row struct {
 	Trust   string             `json:"confidence"`
 }
 
-// families are the values of Material.Family.
-var families = []string{"steel", "cast-iron", "aluminium", "magnesium", "titanium", "copper", "nickel", "zirconium", "heavy", "concrete", "mineral", "liquid", "plastic", "gas", "element"}
+// families are the values of Material.Family in the catalogue.
+var families = []string{"steel", "cast-iron", "aluminium", "magnesium", "titanium", "copper", "nickel", "zirconium", "heavy", "concrete", "mineral", "liquid", "plastic", "gas"}
 
 var catalogue = sync.OnceValue(func() map[string]*Material {
 	list, err := parseCatalogue(catalogueJSON)
@@ -60,9 +61,12 @@ func element(r *record) *Material {
 
 func parseCatalogue(data []byte) ([]*Material, error) {
 	var file struct {
-		Materials []row `json:"materials"`
+		Note      string `json:"note"`
+		Materials []row  `json:"materials"`
 	}
-	if err := json.Unmarshal(data, &file); err != nil {
+	d := json.NewDecoder(bytes.NewReader(data))
+	d.DisallowUnknownFields()
+	if err := d.Decode(&file); err != nil {
 		return nil, err
 	}
 	var list []*Material
@@ -92,6 +96,8 @@ func (r row) material(earlier map[string]*Material) (*Material, error) {
 	switch {
 	case ways != 1:
 		return nil, fmt.Errorf("%q: want exactly one of mass, formula and mix", r.Name)
+	case zBySymbol()[r.Name] != 0:
+		return nil, fmt.Errorf("%q is an element's symbol, want another name", r.Name)
 	case r.Title == "" || r.Source == "" || r.Trust == "":
 		return nil, fmt.Errorf("%q: want a title, a source and a confidence", r.Name)
 	case !slices.Contains(families, r.Family):

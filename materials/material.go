@@ -1,11 +1,9 @@
 package materials
 
 import (
-	"cmp"
 	"fmt"
 	"math"
 	"slices"
-	"sync"
 )
 
 // Process is one way in which photons interact.
@@ -56,8 +54,7 @@ type Material struct {
 // coefficients depend on the composition alone and are tabulated on first use.
 type coefficients struct {
 	fractions []Fraction // rising Z, sum 1
-	once      [processes + 1]sync.Once
-	grids     [processes + 1]*grid
+	tables    lazyGrids
 }
 
 // Range of densities that New takes, g/cm3: thin gas to beyond osmium.
@@ -182,7 +179,7 @@ func (m *Material) MuRhoOf(p Process, keV float64) float64 {
 
 // MuPerMM gives the linear attenuation coefficient in 1/mm at the material's
 // density, NaN outside 1 to 20000 keV.
-func (m *Material) MuPerMM(keV float64) float64 { return m.grid(total).at(keV) * m.density / 10 }
+func (m *Material) MuPerMM(keV float64) float64 { return m.grid(total).at(keV) * (m.density / 10) }
 
 // MuPerMMInto puts the linear attenuation coefficient in 1/mm at every energy
 // into dst, which must be at least as long as keV. It allocates nothing once
@@ -197,29 +194,5 @@ func (m *Material) MuPerMMInto(dst, keV []float64) {
 
 // grid gives the table of a process or of the total, made on first use.
 func (c *coefficients) grid(p Process) *grid {
-	c.once[p].Do(func() { c.grids[p] = c.tabulate(p) })
-	return c.grids[p]
-}
-
-func (c *coefficients) tabulate(p Process) *grid {
-	edges := []float64{pairKeV, tripletKeV}
-	parts := make([]*curves, len(c.fractions))
-	for i, f := range c.fractions {
-		parts[i] = table()[f.Z].interpolants()
-		edges = append(edges, parts[i].edges...)
-	}
-	slices.SortFunc(edges, cmp.Compare[float64])
-	list := []Process{p}
-	if p == total {
-		list = []Process{Coherent, Incoherent, Photoelectric, PairNuclear, PairElectron}
-	}
-	return newGrid(slices.Compact(edges), func(keV, probe float64) (v, dv float64) {
-		for i, f := range c.fractions {
-			for _, q := range list {
-				a, da := parts[i].at(q, keV, probe)
-				v, dv = v+f.Mass*a, dv+f.Mass*da
-			}
-		}
-		return v, dv
-	})
+	return c.tables.get(p, c.tabulate)
 }

@@ -31,6 +31,7 @@ type record struct {
 	nodes  []node
 	once   sync.Once
 	curves *curves
+	tables lazyGrids
 }
 
 // table gives the elements indexed by Z; index 0 is unused.

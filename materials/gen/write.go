@@ -80,30 +80,38 @@ func write(out, text string, p provenance) error {
 // dir. The compressed bytes may differ between Go releases, so it is the text
 // that counts.
 func compare(dir string, files map[string][]byte, text string) error {
-	record, err := os.ReadFile(filepath.Join(dir, "provenance.json"))
+	p, have, err := kept(dir)
 	if err != nil {
 		return err
-	}
-	var p provenance
-	if err := json.Unmarshal(record, &p); err != nil {
-		return fmt.Errorf("provenance.json: %w", err)
 	}
 	for _, name := range inputs {
 		if got := sum(files[name]); got != p.Inputs[name] {
 			return fmt.Errorf("%s has SHA-256 %s, the table was made from %s", name, got, p.Inputs[name])
 		}
 	}
-	kept, err := unpack(filepath.Join(dir, "xcom.txt.gz"))
-	if err != nil {
-		return err
-	}
-	if got := sum(kept); got != p.Table {
-		return fmt.Errorf("xcom.txt.gz holds text with SHA-256 %s, provenance.json says %s", got, p.Table)
-	}
-	if string(kept) != text {
+	if have != text {
 		return fmt.Errorf("xcom.txt.gz differs from what the generator makes of %s", p.Package)
 	}
 	return nil
+}
+
+// kept reads the table in dir and its record, which must agree.
+func kept(dir string) (p provenance, text string, err error) {
+	record, err := os.ReadFile(filepath.Join(dir, "provenance.json"))
+	if err != nil {
+		return p, "", err
+	}
+	if err := json.Unmarshal(record, &p); err != nil {
+		return p, "", fmt.Errorf("provenance.json: %w", err)
+	}
+	data, err := unpack(filepath.Join(dir, "xcom.txt.gz"))
+	if err != nil {
+		return p, "", err
+	}
+	if got := sum(data); got != p.Table {
+		return p, "", fmt.Errorf("xcom.txt.gz holds text with SHA-256 %s, provenance.json says %s", got, p.Table)
+	}
+	return p, string(data), nil
 }
 
 func unpack(path string) ([]byte, error) {
