@@ -15,12 +15,20 @@ type xraylibRow struct {
 	CM2PerG                           []float64
 }
 
+// xraylibFile is the whole of it.
+type xraylibFile struct {
+	KeV       []float64
+	Elements  []xraylibRow
+	Compounds []struct {
+		Name    string
+		Density float64
+		Mass    map[int]float64 // by Z
+	}
+}
+
 func xraylib(t *testing.T) (keV []float64, rows []xraylibRow) {
 	t.Helper()
-	var file struct {
-		KeV      []float64
-		Elements []xraylibRow
-	}
+	var file xraylibFile
 	published(t, "xraylib-cs-total.json", &file)
 	if len(file.Elements) != MaxZ || len(file.KeV) < 50 {
 		t.Fatalf("%d elements at %d energies, want %d at 50 or more", len(file.Elements), len(file.KeV), MaxZ)
@@ -115,6 +123,31 @@ func TestElementFactsXraylib(t *testing.T) {
 		for _, line := range e.KLines {
 			if want := r.KLinesKeV[line.Name]; want > 0 && off(line.KeV, want) > 0.001 && math.Abs(line.KeV-want) > 0.006 {
 				t.Errorf("%s: line %s at %g keV, xraylib %g", r.Symbol, line.Name, line.KeV, want)
+			}
+		}
+	}
+}
+
+// TestCatalogueNIST holds compositions against the list of materials that NIST
+// publishes, as xraylib carries it, and densities against it within 10 %: the
+// trade's grades differ (float glass, dense polyethylene), sand is loose.
+func TestCatalogueNIST(t *testing.T) {
+	var file xraylibFile
+	published(t, "xraylib-cs-total.json", &file)
+	if len(file.Compounds) < 16 {
+		t.Fatalf("%d compounds, want 16 or more", len(file.Compounds))
+	}
+	for _, c := range file.Compounds {
+		m := lookup(t, c.Name)
+		if off(m.DensityGPerCM3(), c.Density) > 0.1 && c.Name != "sand" {
+			t.Errorf("%s: density %g, NIST %g", c.Name, m.DensityGPerCM3(), c.Density)
+		}
+		if len(m.Fractions()) != len(c.Mass) {
+			t.Errorf("%s: elements %v, NIST %v", c.Name, m.Fractions(), c.Mass)
+		}
+		for _, f := range m.Fractions() {
+			if math.Abs(f.Mass-c.Mass[f.Z]) > 3e-4 {
+				t.Errorf("%s: element %d is %.6f by mass, NIST %.6f", c.Name, f.Z, f.Mass, c.Mass[f.Z])
 			}
 		}
 	}
