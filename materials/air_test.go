@@ -59,8 +59,7 @@ func argonEscape(argon *Material, keV float64) float64 {
 	if keV < e.KEdgeKeV {
 		return 0
 	}
-	const kShare = 0.89 // of the photoelectric events above the edge, from the jump
-	return 0.012827 * argon.MuRhoOf(Photoelectric, keV) * kShare * e.KYield * e.KLines[0].KeV / keV
+	return 0.012827 * argon.MuRhoOf(Photoelectric, keV) * e.KShare * e.KYield * e.KLines[0].KeV / keV
 }
 
 // comptonKept is the mean share of the photon's energy that a free electron at

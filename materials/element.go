@@ -26,6 +26,7 @@ type Element struct {
 	DensityGPerCM3 float64    // at room temperature; gases at 20 degC and 101.325 kPa
 	KEdgeKeV       float64    // K absorption edge
 	LEdgesKeV      [3]float64 // L1, L2, L3 absorption edges; 0 where the element has none
+	KShare         float64    // share of the photoelectric events just above the K edge that empty the K shell, from the jump; 0 below sodium, whose edge lies below the tables
 	KYield         float64    // K photons per K vacancy, 0 to 1
 	KLines         []KLine    // strongest first; empty below carbon
 }

@@ -163,6 +163,17 @@ func (m *Material) Source() string { return m.source }
 // memory", and what the spread of density and composition is.
 func (m *Material) Confidence() string { return m.confidence }
 
+// EdgesKeV gives the absorption edges of the material's elements from 1 keV up,
+// rising, each once. Between two of them every coefficient is smooth.
+func (m *Material) EdgesKeV() []float64 {
+	var e []float64
+	for _, f := range m.fractions {
+		e = append(e, table()[f.Z].edges()...)
+	}
+	slices.Sort(e)
+	return slices.Compact(e)
+}
+
 // MuRho gives the total mass attenuation coefficient with coherent scattering
 // in cm2/g at 1 to 20000 keV, NaN outside. At an absorption edge it is the
 // value above the edge. It is within 0.3 % of the nodes of NIST's tables; the

@@ -111,3 +111,21 @@ func TestConcurrent(t *testing.T) {
 	}
 	wait.Wait()
 }
+
+// TestEdges: the edges of an alloy are those of its elements, and at each the
+// coefficient jumps up.
+func TestEdges(t *testing.T) {
+	m, err := Mixture("x", 10, []Part{{lookup(t, "Pb"), 1}, {lookup(t, "W"), 1}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	edges := m.EdgesKeV()
+	if n := len(edges); n != 18 || edges[n-1] != 88.004 || edges[n-2] != 69.525 {
+		t.Errorf("%d edges %v, want 18 that end with tungsten's and lead's K", n, edges)
+	}
+	for _, e := range edges {
+		if above, below := m.MuRho(e), m.MuRho(math.Nextafter(e, 0)); above < 1.003*below {
+			t.Errorf("%g keV: %g below and %g above", e, below, above)
+		}
+	}
+}

@@ -6,6 +6,7 @@ import (
 	_ "embed"
 	"fmt"
 	"io"
+	"math"
 	"strconv"
 	"strings"
 	"sync"
@@ -67,6 +68,7 @@ func parseTable(packed []byte) (*[MaxZ + 1]*record, error) {
 		if t[z] == nil || len(t[z].nodes) == 0 {
 			return nil, fmt.Errorf("element %d is missing", z)
 		}
+		t[z].kShare()
 	}
 	return t, nil
 }
@@ -141,4 +143,25 @@ func (r *record) lineEnergies(binding [6]float64) {
 			line.KeV = keV
 		}
 	}
+}
+
+// kShare takes the K shell's share from the jump of the photoelectric effect.
+func (r *record) kShare() {
+	for i := range len(r.nodes) - 1 {
+		below, above := r.nodes[i], r.nodes[i+1]
+		if below.keV == above.keV && math.Abs(below.keV-r.KEdgeKeV) < 1e-3*r.KEdgeKeV {
+			r.KShare = 1 - below.photo/above.photo
+		}
+	}
+}
+
+// edges gives the energies where the photoelectric effect jumps.
+func (r *record) edges() []float64 {
+	var e []float64
+	for i := range len(r.nodes) - 1 {
+		if r.nodes[i].keV == r.nodes[i+1].keV {
+			e = append(e, r.nodes[i].keV)
+		}
+	}
+	return e
 }

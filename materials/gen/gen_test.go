@@ -1,4 +1,4 @@
-package main
+package gen
 
 import (
 	"errors"
@@ -30,7 +30,7 @@ func TestReproduces(t *testing.T) {
 	case err != nil:
 		t.Fatal(err)
 	default:
-		if err := run(packageDir, keptDir, true); err != nil {
+		if err := Run(packageDir, keptDir, true); err != nil {
 			t.Error(err)
 		}
 	}
@@ -68,7 +68,7 @@ func TestCheckCanFail(t *testing.T) {
 	if _, _, err := kept(dir); err == nil || !strings.Contains(err.Error(), "SHA-256") {
 		t.Errorf("a table that is not its record's: %v", err)
 	}
-	if err := run(filepath.Join(dir, "nowhere"), dir, true); err == nil || !strings.Contains(err.Error(), "python-fisx-common") {
+	if err := Run(filepath.Join(dir, "nowhere"), dir, true); err == nil || !strings.Contains(err.Error(), "python-fisx-common") {
 		t.Errorf("no input: %v", err)
 	}
 }

@@ -1,4 +1,4 @@
-package main
+package gen
 
 import (
 	"bytes"
@@ -24,7 +24,9 @@ type provenance struct {
 	Error     string            `json:"error"`
 }
 
-func run(in, out string, check bool) error {
+// Run reads the package's files in the directory in and writes table and record
+// into out; with check it writes nothing and fails where they differ.
+func Run(in, out string, check bool) error {
 	files, err := readInputs(in)
 	if err != nil {
 		return err
@@ -44,7 +46,7 @@ func run(in, out string, check bool) error {
 		Package:   strings.TrimSpace(string(version)),
 		Source:    "NIST XCOM (Berger and Hubbell, NBSIR 87-3597), EADL97 (UCRL-50400 vol. 30), K rates of Scofield (Phys. Rev. A 9, 1041), binding energies of Larkins (At. Data Nucl. Data Tables 20, 311); public domain",
 		Inputs:    map[string]string{},
-		Generator: "go run ./materials/gen",
+		Generator: "go run materials/gen/main.go",
 		Table:     sum([]byte(text)),
 		Error:     "none added: figures are the input's decimals",
 	}
