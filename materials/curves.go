@@ -102,8 +102,8 @@ func segments(nodes []node) []segment {
 // narrow is the ratio of energies below which an interval beside an edge
 // stands alone. Tin (29.2 to 30 keV) and platinum (78.4 to 80 keV) have the
 // same flaw in slightly wider intervals; they keep the plain rule, as xraylib
-// does, and read up to 1.8 % high at 31 to 39 keV and up to 3.5 % low or 2 %
-// high at 81 to 145 keV against the line between their neighbours in Z.
+// does, and read up to 2.7 % high at 31 to 39 keV and up to 4 % low or 2 % high
+// at 81 to 145 keV against the line between their neighbours in Z.
 const narrow = 1.02
 
 func photoSegment(part []node) segment {

@@ -39,8 +39,8 @@
 //     spline swings by 5 % and ours lies on the line of the neighbours in Z.
 //
 // Tin at 31 to 39 keV and platinum at 81 to 145 keV agree with xraylib but
-// both are up to 1.8 % and 3.5 % off that line: the arrays' value at the K
-// edge does not fit the node beside it.
+// both are up to 2.7 % and 4 % off that line: the arrays' value at the K edge
+// does not fit the node beside it.
 //
 // XCOM treats atoms as free: fine structure within some tens of eV of an edge
 // is not there, and below 10 keV its own uncertainty is several per cent.
