@@ -180,6 +180,10 @@ func fillNumber(f *faults, v reflect.Value, n node, path string, row Field) {
 		f.bar(outOfRange(row, path, n.text, x))
 		return
 	}
+	if x < row.Min || x > row.Max {
+		f.bar(outOfRange(row, path, n.text, x))
+		return
+	}
 	if v.Kind() == reflect.Int {
 		if x != math.Trunc(x) || x > 1e9 {
 			f.bar(outOfRange(row, path, n.text, x))
@@ -217,6 +221,20 @@ func absurd(text string) (FieldError, bool) {
 
 func unknownField(path, name string, names []string) FieldError {
 	e := FieldError{Field: join(path, printable(name)), Problem: "unknown field", Allowed: oneOf(names)}
+	var longer []string // what the file's name is the start of: a unit left out
+	for _, near := range names {
+		if strings.EqualFold(near, name) {
+			longer = []string{strconv.Quote(near)}
+			break
+		}
+		if name != "" && strings.HasPrefix(strings.ToLower(near), strings.ToLower(name)) {
+			longer = append(longer, strconv.Quote(near))
+		}
+	}
+	if len(longer) > 0 {
+		e.Mend = "write " + oneOf(longer)
+		return e
+	}
 	if near := nearest(name, names); near != "" {
 		e.Mend = fmt.Sprintf("write %q", near)
 		return e
@@ -224,12 +242,6 @@ func unknownField(path, name string, names []string) FieldError {
 	for _, row := range table {
 		if strings.HasSuffix(row.Path, "."+name) {
 			e.Mend = "it belongs at " + row.Path
-			return e
-		}
-	}
-	for _, near := range names {
-		if len(name) >= 1 && strings.HasPrefix(strings.ToLower(near), strings.ToLower(name)) {
-			e.Mend = fmt.Sprintf("write %q", near)
 			return e
 		}
 	}

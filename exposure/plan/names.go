@@ -3,6 +3,7 @@ package plan
 import (
 	"encoding/json"
 	"fmt"
+	"maps"
 	"slices"
 	"strings"
 	"sync"
@@ -93,9 +94,10 @@ var materialNames = sync.OnceValue(func() []string {
 	return names
 })
 
-// nearest gives the name of the list that s most likely meant, or "".
+// nearest gives the name of the list that s most likely meant, or "" where none
+// is near or two are alike near: a wrong guess is worse than none.
 func nearest(s string, list []string) string {
-	best, bestCost := "", len(s)/2+1
+	best, bestCost, tie := "", max(1, len(s)/4)+1, false
 	if len(s) <= 2 {
 		bestCost = 1
 	}
@@ -103,12 +105,36 @@ func nearest(s string, list []string) string {
 		if plainName(s) == plainName(name) {
 			return name
 		}
-		if c := edits(strings.ToLower(s), strings.ToLower(name)); c < bestCost {
-			best, bestCost = name, c
+		switch c := edits(strings.ToLower(s), strings.ToLower(name)); {
+		case c < bestCost:
+			best, bestCost, tie = name, c, false
+		case c == bestCost:
+			tie = true
 		}
+	}
+	if tie {
+		return ""
 	}
 	return best
 }
+
+// nearestMaterial also knows the names of the elements: beryllium is Be.
+func nearestMaterial(s string) string {
+	if near := nearest(s, materialNames()); near != "" {
+		return near
+	}
+	return elementNames()[nearest(s, slices.Sorted(maps.Keys(elementNames())))]
+}
+
+var elementNames = sync.OnceValue(func() map[string]string {
+	names := map[string]string{}
+	for z := 1; z <= materials.MaxZ; z++ {
+		if e, err := materials.ElementByZ(z); err == nil {
+			names[e.Name] = e.Symbol
+		}
+	}
+	return names
+})
 
 // plainName drops what people leave out or put in: case, blanks, dashes.
 func plainName(s string) string {

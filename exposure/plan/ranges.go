@@ -98,7 +98,13 @@ func checkName(f *faults, s, path string, row Field, ruleSets []string) {
 		return
 	}
 	e := FieldError{Field: path, Value: s, Problem: "is unknown", Allowed: oneOf(list)}
-	switch near := nearest(s, list); {
+	near := ""
+	if strings.HasSuffix(path, "material") {
+		near = nearestMaterial(s)
+	} else {
+		near = nearest(s, list)
+	}
+	switch {
 	case near != "":
 		e.Mend = fmt.Sprintf("did you mean %q", near)
 	case strings.HasSuffix(path, "material"):

@@ -121,7 +121,7 @@ func (n node) called() string {
 	case 'n':
 		return "null"
 	}
-	return "true or false"
+	return "a truth value"
 }
 
 // syntaxFault tells where the text stops being JSON, in our own words.
