@@ -10,8 +10,8 @@ import (
 // bremsstrahlung gives what the betas of n make in their own source, per decay
 // and cm2 at 1 m, as made: nothing absorbed yet.
 //
-// The spectrum of each branch is the allowed shape p E (E0-E)^2 with the
-// non-relativistic Fermi function of the daughter; every beta is stopped
+// The spectrum of each branch is the allowed shape p E (E0-E)^2 with the Fermi
+// function of the daughter in Bethe and Bacher's form; every beta is stopped
 // inside (its range in the oxide is 0.6 mm). On the way it radiates by the
 // cross section of package electron in the source's compound, evenly in all
 // directions, as the tube's target does but without loss through the surface.
@@ -74,9 +74,11 @@ func (b Beta) above(keV float64) float64 {
 func (b Beta) shape(keV float64) float64 {
 	p := electron.Momentum(keV)
 	e := keV/electron.RestKeV + 1
-	eta := 2 * math.Pi * float64(b.DaughterZ) * electron.FineStructure / electron.Beta(keV)
+	az := float64(b.DaughterZ) * electron.FineStructure
+	eta := 2 * math.Pi * az / electron.Beta(keV)
+	relativistic := math.Pow(e*e*(1+4*az*az)-1, math.Sqrt(1-az*az)-1)
 	left := b.EndKeV - keV
-	return p * e * left * left * eta / -math.Expm1(-eta)
+	return p * e * left * left * eta / -math.Expm1(-eta) * relativistic
 }
 
 // stopping is Bragg's sum of stopping powers, keV cm2/g.

@@ -93,4 +93,4 @@ func (t *target) fillThick(kV, anodeDeg float64, b *bins) {
 }
 
 // thickScale is the one fitted constant of ThickTarget; see the package.
-const thickScale = 0.74
+const thickScale = 0.742

@@ -9,8 +9,8 @@ import (
 // ebelScale and finkelshteinScale bring the two models to the outputs that
 // thickScale was fitted to.
 const (
-	ebelScale         = 0.45
-	finkelshteinScale = 8.0
+	ebelScale         = 0.394
+	finkelshteinScale = 7.47
 )
 
 // ebel is Ebel's formula: photons per keV and unit of strength at photon

@@ -1,7 +1,6 @@
 package beam
 
 import (
-	_ "embed"
 	"encoding/json"
 	"fmt"
 	"math"
@@ -9,11 +8,9 @@ import (
 	"sync"
 	"time"
 
+	"halfvalue/exposure/beam/data"
 	"halfvalue/materials"
 )
-
-//go:embed data/nuclides.json
-var nuclidesJSON []byte
 
 // Line is a photon line of a nuclide.
 type Line struct {
@@ -22,9 +19,9 @@ type Line struct {
 }
 
 // UnmarshalJSON reads [keV, yield].
-func (l *Line) UnmarshalJSON(data []byte) error {
+func (l *Line) UnmarshalJSON(text []byte) error {
 	var pair [2]float64
-	if err := json.Unmarshal(data, &pair); err != nil {
+	if err := json.Unmarshal(text, &pair); err != nil {
 		return err
 	}
 	l.KeV, l.Yield = pair[0], pair[1]
@@ -67,7 +64,7 @@ var nuclides = sync.OnceValue(func() []Nuclide {
 		Confidence string    `json:"confidence"`
 		Nuclides   []Nuclide `json:"nuclides"`
 	}
-	if err := json.Unmarshal(nuclidesJSON, &file); err != nil {
+	if err := json.Unmarshal(data.Nuclides, &file); err != nil {
 		panic(fmt.Sprintf("beam: data/nuclides.json does not decode: %v", err))
 	}
 	for i := range file.Nuclides {

@@ -65,7 +65,7 @@ type publishedRow struct {
 
 // publishedFiles are the files of testdata that Residuals reads.
 var publishedFiles = []string{
-	"iso4037-narrow.json", "iso4037-wide.json", "bipm-qualities.json", "iso4037-nominal.json", "iso4037-soft.json",
+	"iso4037-narrow.json", "iso4037-wide.json", "bipm-qualities.json", "iso4037-nominal.json", "iso4037-soft.json", "tube-soft-qualities.json",
 	"tube-output-tasmics.json", "tube-output-icrp33.json", "tube-output-others.json", "tube-k-share.json",
 	"nuclides-constants.json",
 }

@@ -49,7 +49,7 @@ func Sealed(s plan.Sealed) (Spectrum, error) {
 	}
 	switch s.Basis {
 	case "", Output:
-		return n.output(s.SizeMM), nil
+		return n.Output(s.SizeMM), nil
 	case Content:
 		return n.content(s.SizeMM), nil
 	}
@@ -68,9 +68,10 @@ func (n Nuclide) Bare() Spectrum {
 	return s
 }
 
-// output is the spectrum for basis output. The bremsstrahlung leaves a metal
+// Output is the spectrum of a source of n for basis output, per GBq s at 1 m;
+// sizeMM, 0 for a point, matters only where betas make bremsstrahlung. The bremsstrahlung leaves a metal
 // that weakens its soft end more than the lines to which the activity refers.
-func (n Nuclide) output(sizeMM float64) Spectrum {
+func (n Nuclide) Output(sizeMM float64) Spectrum {
 	s := n.Bare()
 	if n.beta == nil {
 		return s

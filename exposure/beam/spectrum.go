@@ -38,15 +38,6 @@ const AirPathMM = 1000
 // `table hvl` mean AirPathMM of it.
 func (s Spectrum) InAir(mm float64) Spectrum { return s.Through(dryAir(), mm) }
 
-// Plus gives s with o, which has the same energies, added to it.
-func (s Spectrum) plus(o Spectrum) Spectrum {
-	out := Spectrum{s.KeV, s.WidthKeV, make([]float64, len(s.KeV))}
-	for i := range out.PerCM2 {
-		out.PerCM2[i] = s.PerCM2[i] + o.PerCM2[i]
-	}
-	return out
-}
-
 // PhotonsPerCM2 gives the fluence of all energies.
 func (s Spectrum) PhotonsPerCM2() float64 {
 	var sum float64

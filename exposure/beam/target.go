@@ -79,7 +79,8 @@ func newTarget(symbol string) *target {
 // jump is the photoelectric cross section just below an edge against that
 // just above it.
 func (t *target) jump(edgeKeV float64) float64 {
-	below, above := edgeKeV*(1-1e-6), edgeKeV*(1+1e-6)
+	const aside = 2e-4 // edges are rounded differently from table to table
+	below, above := edgeKeV*(1-aside), edgeKeV*(1+aside)
 	return t.metal.MuRhoOf(materials.Photoelectric, below) / t.metal.MuRhoOf(materials.Photoelectric, above)
 }
 

@@ -120,7 +120,7 @@ func (b *bins) lay(t *target, filters []layer, kV float64) {
 	perMM := 10 / t.metal.DensityGPerCM3()
 	for i, e := range b.keV {
 		b.mu[i] *= perMM
-		b.photo[i] = photoelectric(t.metal, e)
+		b.photo[i] = t.metal.MuRhoOf(materials.Photoelectric, e)
 		b.sum[i] = 0
 	}
 }

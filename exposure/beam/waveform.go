@@ -34,7 +34,7 @@ var constant = []moment{{1, 1}}
 
 // halfWave divides a quarter of a sine by Gauss-Legendre.
 var halfWave = sync.OnceValue(func() []moment {
-	rule := newGauss(10)
+	rule := newGauss(8)
 	var out []moment
 	var all float64
 	for i, x := range rule.x {
