@@ -36,7 +36,7 @@
 //
 //	thick target             mean +0.7 %, mean size 1.3 %, worst 3.9 % (H-250); no gated row beyond its tolerance
 //	Ebel 1999                mean -0.8 %, mean size 1.0 %, worst 5.5 % (BIPM 250 kV); 11 beyond: W-250 and W-300 are 3 to 4 % soft in mean energy, output grows too fast
-//	Finkelshtein and Pavlova mean +0.9 %, mean size 2.6 %, worst 10.4 % (H-250); 9 beyond
+//	Finkelshtein and Pavlova mean +0.9 %, mean size 2.6 %, worst 10.4 % (H-250); 9 beyond, soft to 80 kV and hard on wide beams
 //
 // so ThickTarget is the engine's. Rows beyond tolerance count half-value
 // layers, mean energies, outputs and shares of lines.
@@ -45,7 +45,8 @@
 //
 // Fitted: the scale 0.742 of the continuum. Its residuals are +3, +4, +6, +8
 // and +13 % for TASMICS at 50, 70, 80, 100 and 150 kV and -20 to -22 % for ICRP
-// 33. At the 12 deg of the tube that TASMICS describes they are 14 % lower.
+// 33. At 12 deg, the angle of the tube that TASMICS describes (from memory), they
+// are -12 to -6 %.
 //
 // Chosen, within what is published and with the qualities in sight, so that
 // they are not free of them either: the roughness of 1 um (0 makes H-100 2 %

@@ -11,7 +11,7 @@ import (
 // electron's first energy (x) and by the square root of photon energy over
 // electron energy (y).
 type thickTables struct {
-	yield *table // ln of photons per keV and electron in all directions, times k/(T0-k) k
+	yield *table // ln of photons per keV and electron in all directions, times k^2/(T0-k)
 	depth *table // mean depth of generation, g/cm2 over the range
 	form  *table // square of the mean depth over its variance
 	reach *table // ln of the range, g/cm2, by x alone

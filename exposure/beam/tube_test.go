@@ -205,3 +205,44 @@ func TestTubeFromManySides(t *testing.T) {
 	}
 	wait.Wait()
 }
+
+// TestHalfWaveIsFine holds the few voltages of a cycle against 400.
+func TestHalfWaveIsFine(t *testing.T) {
+	tg, err := targetNamed("W")
+	if err != nil {
+		t.Fatal(err)
+	}
+	sums := func(kV float64, cycle []moment, filters []layer) (kerma, mean float64) {
+		b := new(bins)
+		b.lay(tg, filters, kV)
+		for _, m := range cycle {
+			if kV*m.voltage > lowTableKV {
+				b.add(ThickTarget, tg, kV*m.voltage, 20, m.charge)
+			}
+		}
+		s := b.spectrum()
+		s.filter(filters)
+		return s.KermaMGy(), s.MeanKeV()
+	}
+	const n = 400
+	var fine []moment
+	var all float64
+	for i := range n {
+		v := math.Sin(math.Pi / 2 * (float64(i) + 0.5) / n)
+		c := min(1, math.Pow(v/saturation, 1.5))
+		fine = append(fine, moment{v, c})
+		all += c
+	}
+	for i := range fine {
+		fine[i].charge /= all
+	}
+	for _, kV := range []float64{60, 160, 300} {
+		for _, f := range []layer{{material(t, "Al"), 2}, {material(t, "Fe"), 10}} {
+			k, m := sums(kV, halfWave(), []layer{f})
+			wantK, wantM := sums(kV, fine, []layer{f})
+			if math.Abs(k/wantK-1) > 0.01 || math.Abs(m/wantM-1) > 0.002 {
+				t.Errorf("%g kV behind %g mm %s: kerma %+.2f %%, mean energy %+.2f %%", kV, f.mm, f.material.Name(), (k/wantK-1)*100, (m/wantM-1)*100)
+			}
+		}
+	}
+}
