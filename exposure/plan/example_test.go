@@ -15,6 +15,6 @@ func ExampleDecode() {
 	fmt.Println(err)
 	// Output:
 	// source.tube.kv: "500" is out of range: want 20 to 450 kV; set 450 kV or less
-	// setup.sfd: unknown field: want kind, image, sfdMM or bMM; write "sfdMM"
+	// setup.sfd: unknown field: want kind, image, side, shots, sfdMM or bMM; write "sfdMM"
 	// setup.sfdMM: missing: want 20 to 20000 mm; add "sfdMM"
 }

@@ -80,6 +80,7 @@ var fixedNames = map[string][]string{
 	"source.sealed.basis":  Bases,
 	"setup.kind":           Kinds,
 	"setup.image":          Images,
+	"setup.side":           Sides,
 	"detector.film.class":  Classes,
 	"site.limits[].per":    Periods,
 }

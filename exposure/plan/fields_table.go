@@ -72,12 +72,16 @@ var partFields = []Field{
 		Default: "none; needed with the double-wall setups", Meaning: "outside diameter of a pipe, De of the standards"},
 	{Path: "part.wallMM", Kind: Number, Unit: "mm", Min: 0.1, Max: 500, Step: 0.1, Usual: []float64{2.8, 3.2, 3.6, 3.9, 5.5, 6, 7.1, 8.2, 9.5, 12.7},
 		Default: "none; needed with odMM", Meaning: "nominal wall of a pipe, t of the standards"},
+	{Path: "part.weldMM", Kind: Number, Unit: "mm", Min: 0.5, Max: 500, Step: 1, Usual: []float64{6, 8, 10, 12, 15, 20, 25}, Default: "not stated: checks that need it stay undecided",
+		Meaning: "width of the weld's cap"},
 }
 
 var setupFields = []Field{
 	{Path: "setup", Kind: Object, Required: true, Meaning: "where source, part and detector stand"},
 	{Path: "setup.kind", Kind: Name, Required: true, Meaning: "how the beam meets the part"},
 	{Path: "setup.image", Kind: Name, Default: "elliptical with double-wall-double-image", Meaning: "how the two walls fall on the film; only with double-wall-double-image"},
+	{Path: "setup.side", Kind: Name, Default: "outside with a single-wall pipe", Meaning: "where the source stands; only with single-wall and a pipe"},
+	{Path: "setup.shots", Kind: Number, Min: 1, Max: 100, Step: 1, Usual: []float64{1, 2, 3, 4, 5, 6, 8, 10}, Default: "not stated: the number needed is told", Meaning: "shots planned round the weld; only with a pipe"},
 	{Path: "setup.sfdMM", Kind: Number, Required: true, Unit: "mm", Min: 20, Max: 20000, Step: 10,
 		Usual: []float64{200, 250, 300, 350, 400, 500, 600, 700, 800, 900, 1000, 1200, 1500, 2000}, Meaning: "source to film; more than the part and its distance from the film take"},
 	{Path: "setup.bMM", Kind: Number, Unit: "mm", Min: 0.01, Max: 20000, Step: 1, Usual: []float64{5, 10, 20, 30, 50, 100},

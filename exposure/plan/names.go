@@ -19,6 +19,7 @@ import (
 var (
 	Kinds     = []string{SingleWall, DoubleWallSingleImage, DoubleWallDoubleImage, Panoramic}
 	Images    = []string{Elliptical, Perpendicular}
+	Sides     = []string{Outside, Inside}
 	Targets   = []string{"W", "Mo", "Cu", "Rh", "Cr", "Au"}
 	Waveforms = []string{"constant", "two-pulse", "self-rectified"}
 	Bases     = []string{"output", "content"}
@@ -38,6 +39,12 @@ const (
 const (
 	Elliptical    = "elliptical"
 	Perpendicular = "perpendicular"
+)
+
+// Where the source of a single-wall pipe stands.
+const (
+	Outside = "outside"
+	Inside  = "inside"
 )
 
 // RuleSets gives the names of the rule sets that come with the program.

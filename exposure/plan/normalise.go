@@ -100,6 +100,9 @@ func (n *normaliser) setup() {
 	if n.Setup.Kind == DoubleWallDoubleImage {
 		n.text(&n.Setup.Image, "setup.image", Elliptical, "shows the two walls beside each other")
 	}
+	if n.Setup.Kind == SingleWall && n.Part.ODMM > 0 {
+		n.text(&n.Setup.Side, "setup.side", Outside, "a pipe is seldom open to a source")
+	}
 	why := "the part's total thickness: film touching the part"
 	if n.Setup.DoubleWall() {
 		why = "the pipe's outside diameter: film touching the pipe"

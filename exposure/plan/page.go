@@ -36,7 +36,7 @@ const pageFoot = `
 - ` + "`bMM`" + ` is at least the sum of ` + "`part.layers`" + `; ` + "`sfdMM`" + ` is more than the part and its distance from the film take.
 - The double-wall setups need ` + "`odMM` and `wallMM`" + `; everywhere a pipe has both, the wall is less than half the diameter, and the layers
   (both walls with the double-wall setups) add up to the wall less 12.5 % or more and to the diameter plus 20 mm or less.
-- ` + "`setup.image`" + ` only with double-wall-double-image.
+- ` + "`setup.image`" + ` only with double-wall-double-image; ` + "`setup.side`" + ` only with a single-wall pipe; ` + "`setup.shots`" + ` only with a pipe.
 - A limit is rateUSvPerH with averagingMin, or doseUSv with per (and occupancy). Names of limits and of sections differ.
 - Screens are lead. An empty list is the same as one left out. Times are kept in UTC.
 `

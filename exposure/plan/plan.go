@@ -75,6 +75,7 @@ type Part struct {
 	Sections []Section `json:"sections,omitempty"`
 	ODMM     float64   `json:"odMM,omitzero"`   // outside diameter, pipes only
 	WallMM   float64   `json:"wallMM,omitzero"` // nominal wall, pipes only
+	WeldMM   float64   `json:"weldMM,omitzero"` // width of the weld's cap; default: not stated
 }
 
 // Layer is one penetrated thickness along the central ray.
@@ -93,6 +94,8 @@ type Section struct {
 type Setup struct {
 	Kind  string  `json:"kind"`           // single-wall, double-wall-single-image, double-wall-double-image, panoramic
 	Image string  `json:"image,omitzero"` // with double-wall-double-image: elliptical (default) or perpendicular
+	Side  string  `json:"side,omitzero"`  // single-wall pipes: source outside (default) or inside
+	Shots int     `json:"shots,omitzero"` // shots planned round the weld; default: not stated
 	SFDMM float64 `json:"sfdMM"`          // source to film, 20 to 20000 mm
 	BMM   float64 `json:"bMM,omitzero"`   // source-side surface to film; default and least: the part's total thickness
 }

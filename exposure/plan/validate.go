@@ -173,12 +173,28 @@ func (p Plan) validateSetup(f *faults) {
 	if s.Image != "" && s.Kind != DoubleWallDoubleImage && f.clean("setup.kind", "setup.image") {
 		f.add(FieldError{Field: "setup.image", Value: s.Image, Problem: "does not go with " + s.Kind, Allowed: "none but with double-wall-double-image", Mend: "take it out"})
 	}
+	pipe := p.Part.ODMM > 0
+	if s.Side != "" && (s.Kind != SingleWall || !pipe) && f.clean("setup.kind", "setup.side", "part.odMM") {
+		f.add(FieldError{Field: "setup.side", Value: s.Side, Problem: "goes with a single-wall pipe only", Allowed: "none without odMM or with " + s.Kind, Mend: "take it out"})
+	}
+	if s.Shots != 0 && !pipe && f.clean("setup.shots", "part.odMM") {
+		f.add(FieldError{Field: "setup.shots", Value: fmt.Sprint(s.Shots), Problem: "goes with a pipe only", Allowed: "none without odMM", Mend: "take it out"})
+	}
 	if !f.clean("part.layers", "setup.bMM", "setup.sfdMM", "setup.kind", "part.odMM", "part.wallMM") {
 		return
 	}
 	total := p.Part.TotalMM()
 	if s.BMM > 0 && s.BMM < total*(1-slack) {
 		f.add(FieldError{Field: "setup.bMM", Value: format(s.BMM), Problem: "is less than the part's total thickness", Allowed: quantity(total, "mm") + " or more", Mend: "leave it out where the film touches the part"})
+		return
+	}
+	p.validateSFD(f)
+}
+
+func (p Plan) validateSFD(f *faults) {
+	s := p.Setup
+	if inside := p.Part.ODMM - p.Part.WallMM + p.GapMM(); s.Side == Inside && s.SFDMM >= inside*(1-slack) {
+		f.add(FieldError{Field: "setup.sfdMM", Value: format(s.SFDMM), Problem: "puts the source outside the pipe", Allowed: fmt.Sprintf("less than %s mm, the far inner wall", round(inside)), Mend: fmt.Sprintf("set %s mm or less", down(inside*(1-1e-6)))})
 		return
 	}
 	span, of := p.SpanMM(), "the film touching the part"
