@@ -185,8 +185,8 @@ func fillNumber(f *faults, v reflect.Value, n node, path string, row Field) {
 		return
 	}
 	if v.Kind() == reflect.Int {
-		if x != math.Trunc(x) || x > 1e9 {
-			f.bar(outOfRange(row, path, n.text, x))
+		if x != math.Trunc(x) {
+			f.bar(FieldError{Field: path, Value: n.text, Problem: "is no whole number", Allowed: wanted(row), Mend: "write " + format(math.Round(x))})
 			return
 		}
 		v.SetInt(int64(x))
