@@ -11,7 +11,7 @@ func (d *Desk) recompute() {
 	}
 	again := &Again{Number: e.Number}
 	d.state.Book.Again = again
-	p, err := decode(e.Plan)
+	p, err := d.decode(e.Plan)
 	if err != nil {
 		again.Fault = err.Error()
 		return
@@ -21,6 +21,7 @@ func (d *Desk) recompute() {
 		again.Fault = err.Error()
 		return
 	}
+	again.Working = a.Working
 	then := e.Then
 	add := func(name, unit string, was, now float64) {
 		if was != 0 || now != 0 {

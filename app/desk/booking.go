@@ -160,6 +160,7 @@ func (d *Desk) openEntry(n uint64) {
 	}
 	v.Open = &e
 	d.state.Refusal = nil
+	d.recompute()
 }
 
 func (d *Desk) verify() {

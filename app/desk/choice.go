@@ -61,12 +61,12 @@ func sourceChoices(p plan.Plan) []Choice {
 	out := []Choice{kind}
 	if t := p.Source.Tube; t != nil {
 		out = append(out,
-			Choice{"source.tube.target", "target", or(t.Target, "W"), plainOptions("W", "Mo", "Cu", "Rh", "Cr", "Au"), func(p *plan.Plan, v string) { p.Source.Tube.Target = v }},
-			Choice{"source.tube.waveform", "waveform", or(t.Waveform, "constant"), plainOptions("constant", "two-pulse", "self-rectified"), func(p *plan.Plan, v string) { p.Source.Tube.Waveform = v }})
+			Choice{"source.tube.target", "target", or(t.Target, "W"), plainOptions(plan.Targets...), func(p *plan.Plan, v string) { p.Source.Tube.Target = v }},
+			Choice{"source.tube.waveform", "waveform", or(t.Waveform, "constant"), plainOptions(plan.Waveforms...), func(p *plan.Plan, v string) { p.Source.Tube.Waveform = v }})
 	}
 	if s := p.Source.Sealed; s != nil {
 		out = append(out,
-			Choice{"source.sealed.nuclide", "nuclide", s.Nuclide, plainOptions("Ir-192", "Se-75", "Co-60", "Yb-169", "Tm-170"), func(p *plan.Plan, v string) { p.Source.Sealed.Nuclide = v }},
+			Choice{"source.sealed.nuclide", "nuclide", s.Nuclide, plainOptions(plan.Nuclides()...), func(p *plan.Plan, v string) { p.Source.Sealed.Nuclide = v }},
 			Choice{"source.sealed.basis", "what the certificate gives", or(s.Basis, "output"), []Option{{"output", "Output activity", ""}, {"content", "Content activity", ""}}, func(p *plan.Plan, v string) { p.Source.Sealed.Basis = v }})
 	}
 	return out
@@ -123,7 +123,7 @@ func setupChoices(p plan.Plan) []Choice {
 		}
 	}}}
 	if p.Setup.Kind == "double-wall-double-image" {
-		out = append(out, Choice{"setup.image", "image", or(p.Setup.Image, "elliptical"), plainOptions("elliptical", "perpendicular"), func(p *plan.Plan, v string) { p.Setup.Image = v }})
+		out = append(out, Choice{"setup.image", "image", or(p.Setup.Image, "elliptical"), plainOptions(plan.Images...), func(p *plan.Plan, v string) { p.Setup.Image = v }})
 	}
 	return out
 }
@@ -134,7 +134,7 @@ func detectorChoices(p plan.Plan) []Choice {
 		return nil
 	}
 	return []Choice{
-		{"detector.film.class", "film class", f.Class, plainOptions("C1", "C2", "C3", "C4", "C5", "C6"), func(p *plan.Plan, v string) { p.Detector.Film.Class = v }},
+		{"detector.film.class", "film class", f.Class, plainOptions(plan.Classes...), func(p *plan.Plan, v string) { p.Detector.Film.Class = v }},
 		{"detector.film.screensMM", "lead screens", screensName(f.ScreensMM), screenOptions(), func(p *plan.Plan, v string) { p.Detector.Film.ScreensMM = screensOf(v) }},
 	}
 }
@@ -164,4 +164,14 @@ func screensOf(name string) *[2]float64 {
 		}
 	}
 	return nil
+}
+
+// Title is what people read of the value that is chosen now.
+func (c Choice) Title() string {
+	for _, o := range c.Options {
+		if o.Value == c.Value {
+			return o.Title
+		}
+	}
+	return c.Value
 }

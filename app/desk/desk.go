@@ -1,9 +1,10 @@
 package desk
 
 import (
-	"errors"
 	"fmt"
 	"math"
+	"slices"
+	"time"
 
 	"halfvalue/exposure/plan"
 )
@@ -11,8 +12,7 @@ import (
 // Options are what a desk is opened with besides its platform.
 type Options struct {
 	Reckon Reckoner
-	Demo   []byte   // plan file of the demo job, for the first run
-	Rules  []Option // rule sets that a plan may name; none: no choice is shown
+	Rules  []Option // rule sets that a plan may name; none: those that come with the program
 	Plan   []byte   // plan to open instead of the last one
 	People []string // who may log, until the book knows better
 }
@@ -23,7 +23,6 @@ type Desk struct {
 	platform Platform
 	reckon   Reckoner
 	rules    []Option
-	demo     []byte
 	state    State
 	book     Book
 	past     []step // what Undo goes back to, the last step last
@@ -44,10 +43,12 @@ const maxSteps = 1000
 
 // Open makes a desk on the given plan, else on the last one, else on the demo
 // job. It never fails: what could not be read is stated in the State, and the
-// demo job is always there. It panics if the demo job is no valid plan, which
-// is a fault of the program.
+// demo job is always there.
 func Open(p Platform, o Options) *Desk {
-	d := &Desk{platform: p, reckon: o.Reckon, rules: o.Rules, demo: o.Demo}
+	d := &Desk{platform: p, reckon: o.Reckon, rules: o.Rules}
+	if d.rules == nil {
+		d.rules = plainOptions(plan.RuleSets()...)
+	}
 	d.state = State{Units: SI, Light: Paper, Text: 100, Sheet: ShotSheet, People: o.People}
 	d.openSettings()
 	d.openPlan(o.Plan)
@@ -66,32 +67,37 @@ func (d *Desk) openPlan(given []byte) {
 		data = last
 	}
 	if data != nil {
-		p, err := decode(data)
+		p, err := d.decode(data)
 		if err == nil {
 			d.place(p, data)
 			return
 		}
 		d.refuse(fmt.Errorf("the last plan was not opened: %w", err))
 	}
-	p, err := decode(d.demo)
+	d.place(plan.Demo(), demoBytes())
+}
+
+// demoBytes is the demo job's plan as bytes.
+func demoBytes() []byte {
+	data, err := plan.Encode(plan.Demo())
 	if err != nil {
-		panic("desk: the demo job is no valid plan: " + err.Error())
+		panic("desk: the demo job has no bytes: " + err.Error())
 	}
-	d.place(p, d.demo)
+	return data
 }
 
 // place makes a plan current together with its bytes.
 func (d *Desk) place(p plan.Plan, data []byte) {
 	d.state.Plan, d.state.PlanBytes = p, data
-	d.state.Filled = fill(p)
-	d.state.Demo = string(data) == string(d.demo)
+	d.state.Filled, d.state.Defaults = p.Normalised()
+	d.state.Demo = string(data) == string(demoBytes())
 }
 
 // State returns what the sheets show. Slices in it are shared: read only.
 func (d *Desk) State() State {
 	s := d.state
 	s.UndoName, s.RedoName = lastName(d.past), lastName(d.future)
-	s.Choices = choices(s.Plan, d.rules)
+	s.Rules = d.rules
 	return s
 }
 
@@ -120,7 +126,7 @@ func (d *Desk) Apply(in Intent) {
 	case SetAt:
 		d.change("time of the shot", func(p *plan.Plan) { p.At = in.To })
 	case AtNow:
-		d.change("time of the shot", func(p *plan.Plan) { p.At = d.platform.Now().UTC().Truncate(60e9) })
+		d.change("time of the shot", func(p *plan.Plan) { p.At = d.minute() })
 	case AddLayer:
 		d.addLayer(in.After)
 	case DropLayer:
@@ -137,6 +143,9 @@ func (d *Desk) Apply(in Intent) {
 		d.applyView(in)
 	}
 }
+
+// minute is the wall clock to the minute.
+func (d *Desk) minute() time.Time { return d.platform.Now().UTC().Truncate(time.Minute) }
 
 // settle ends a scrub: its step of undo closes and the plan is kept on disk.
 func (d *Desk) settle(in Intent) {
@@ -225,7 +234,12 @@ func (d *Desk) choose(in Choose) {
 	}
 	for _, o := range c.Options {
 		if o.Value == in.To {
-			d.change(c.Name+" "+o.Title, func(p *plan.Plan) { c.set(p, in.To) })
+			d.change(c.Name+" "+o.Title, func(p *plan.Plan) {
+				if in.To == "sealed" && p.At.IsZero() {
+					p.At = d.minute()
+				}
+				c.set(p, in.To)
+			})
 			return
 		}
 	}
@@ -239,11 +253,7 @@ func (d *Desk) addLayer(after int) {
 		return
 	}
 	d.change("add a layer", func(p *plan.Plan) {
-		l := p.Part.Layers[after]
-		p.Part.Layers = append(p.Part.Layers[:after+1], append([]plan.Layer{l}, p.Part.Layers[after+1:]...)...)
-		if p.Setup.BMM > 0 {
-			p.Setup.BMM += l.MM
-		}
+		keepGap(p, func() { p.Part.Layers = slices.Insert(p.Part.Layers, after+1, p.Part.Layers[after]) })
 	})
 }
 
@@ -254,8 +264,7 @@ func (d *Desk) dropLayer(i int) {
 		return
 	}
 	d.change("take a layer out", func(p *plan.Plan) {
-		setLayer(p, i, 0)
-		p.Part.Layers = append(p.Part.Layers[:i], p.Part.Layers[i+1:]...)
+		keepGap(p, func() { p.Part.Layers = slices.Delete(p.Part.Layers, i, i+1) })
 	})
 }
 
@@ -278,7 +287,7 @@ func (d *Desk) mend(m Mend) {
 }
 
 func (d *Desk) load(name string, data []byte) {
-	p, err := decode(data)
+	p, err := d.decode(data)
 	if err != nil {
 		d.refuse(fmt.Errorf("%s: %w", name, err))
 		return
@@ -297,15 +306,9 @@ func (d *Desk) change(name string, edit func(*plan.Plan)) {
 // replace edits a copy of the plan and accepts it if plan and physics do. With
 // merge it belongs to the step that is open.
 func (d *Desk) replace(name string, merge bool, edit func(*plan.Plan)) bool {
-	p, err := decode(d.state.PlanBytes)
-	if err != nil {
-		panic("desk: the current plan does not decode: " + err.Error())
-	}
+	p := d.state.Plan.Clone()
 	edit(&p)
-	data, err := encode(p)
-	if err == nil {
-		p, err = decode(data)
-	}
+	p, data, err := d.check(p)
 	if err != nil {
 		d.refuse(err)
 		return false
@@ -351,7 +354,7 @@ func (d *Desk) swap(from, to *[]step) {
 	s := (*from)[n-1]
 	*from = (*from)[:n-1]
 	*to = append(*to, step{s.name, d.state.PlanBytes})
-	p, err := decode(s.data)
+	p, err := d.decode(s.data)
 	if err != nil {
 		panic("desk: a plan that was accepted does not decode: " + err.Error())
 	}
@@ -397,13 +400,7 @@ func (d *Desk) closeGone() {
 }
 
 // refuse states why a change was not made.
-func (d *Desk) refuse(err error) {
-	var r *Refusal
-	if !errors.As(err, &r) {
-		r = &Refusal{Text: err.Error()}
-	}
-	d.state.Refusal = r
-}
+func (d *Desk) refuse(err error) { d.state.Refusal = refusalOf(err) }
 
 func (d *Desk) save() {
 	d.state.SaveErr = ""

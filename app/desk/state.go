@@ -4,6 +4,7 @@ import (
 	"fmt"
 
 	"halfvalue/exposure/plan"
+	"halfvalue/exposure/working"
 )
 
 // Sheet is one of the screens.
@@ -55,10 +56,11 @@ const (
 type State struct {
 	Plan      plan.Plan // as the user has it, always valid
 	Filled    plan.Plan // with the documented defaults filled in
-	PlanBytes []byte    // the same as bytes
-	Answer    Answer    // reckoning of Plan
-	Fault     string    // why Plan has no answer; empty when it has
-	Checked   bool      // rules were applied
+	Defaults  []plan.Default
+	PlanBytes []byte // the same as bytes
+	Answer    Answer // reckoning of Plan
+	Fault     string // why Plan has no answer; empty when it has
+	Checked   bool   // rules were applied
 
 	UndoName, RedoName string   // empty: nothing to undo or redo
 	Refusal            *Refusal // the last change that was refused, until the next accepted one
@@ -71,7 +73,7 @@ type State struct {
 	Sheet   Sheet
 	Panel   Panel
 	People  []string // who logged before, newest first
-	Choices []Choice // every choice that the plan offers
+	Rules   []Option // rule sets that the plan may name
 	Curve   Curve    // trade-off of the open dial
 	Book    BookView
 	Demo    bool // the plan is the demo job's
@@ -92,9 +94,20 @@ type BookView struct {
 
 // Again is a recomputation of an entry with today's engine.
 type Again struct {
-	Number uint64
-	Fault  string
-	Rows   []AgainRow
+	Number  uint64
+	Fault   string
+	Rows    []AgainRow
+	Working []working.Step // of today's reckoning of the entry's plan
+}
+
+// Agrees says whether every figure agrees.
+func (a Again) Agrees() bool {
+	for _, r := range a.Rows {
+		if !r.Agrees {
+			return false
+		}
+	}
+	return a.Fault == ""
 }
 
 // AgainRow compares one figure.

@@ -32,7 +32,7 @@ func (d *Desk) retrace() {
 		return
 	}
 	lo, hi := curveRange(l.Quantity)
-	key := d.curveKey(l, lo)
+	key := curveKey(l, d.state.Plan)
 	if key == d.trace.key && d.trace.field == l.Field && d.inCurve(l.Value) {
 		return
 	}
@@ -47,13 +47,10 @@ func (d *Desk) inCurve(v float64) bool {
 }
 
 // curveKey is the plan with the curve's own quantity put to a fixed value.
-func (d *Desk) curveKey(l place, _ float64) string {
-	p, err := decode(d.state.PlanBytes)
-	if err != nil {
-		return ""
-	}
+func curveKey(l place, p plan.Plan) string {
+	p = p.Clone()
 	l.set(&p, l.Max)
-	data, err := encode(p)
+	data, err := plan.Encode(p)
 	if err != nil {
 		return ""
 	}
@@ -111,16 +108,13 @@ func (d *Desk) traceMore(n int) {
 }
 
 func (d *Desk) pointAt(l place, x float64) CurvePoint {
-	data, err := encode(d.trace.base)
-	if err != nil {
-		return CurvePoint{X: x, Refused: true}
-	}
-	p, err := decode(data)
-	if err != nil {
-		return CurvePoint{X: x, Refused: true}
-	}
+	p := d.trace.base.Clone()
 	l.set(&p, tidy(x))
-	a, err := d.reckonValid(p)
+	p, _, err := d.check(p)
+	if err != nil {
+		return CurvePoint{X: x, Refused: true}
+	}
+	a, err := d.reckon(p)
 	if err != nil {
 		return CurvePoint{X: x, Refused: true}
 	}
@@ -132,16 +126,4 @@ func (d *Desk) pointAt(l place, x float64) CurvePoint {
 		point.Short = point.Short || c.Verdict == Short
 	}
 	return point
-}
-
-// reckonValid checks a plan as the decoder would and reckons it.
-func (d *Desk) reckonValid(p plan.Plan) (Answer, error) {
-	data, err := encode(p)
-	if err != nil {
-		return Answer{}, err
-	}
-	if p, err = decode(data); err != nil {
-		return Answer{}, err
-	}
-	return d.reckon(p)
 }

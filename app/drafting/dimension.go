@@ -4,7 +4,9 @@ import "math"
 
 // Dimension is a dimension line in the spirit of ISO 129: extension lines from
 // the two points, a line with arrows between them, and the text parallel to
-// the line and above it, to be read from below or from the right.
+// the line and above it, to be read from below or from the right. Where the
+// distance is too small the arrows stand outside, and the text beyond B or,
+// at an upright line, level to the right of it.
 type Dimension struct {
 	A, B Pt
 	Off  float64 // distance of the line from A-B, positive to the left of A to B as drawn on paper with y up, that is: a B to the right of A puts the line above for a positive Off
@@ -14,8 +16,6 @@ type Dimension struct {
 	Ink  Ink
 	// Break cuts the line with a zigzag: the distance is not drawn whole.
 	Break bool
-	// Outside is how far the arrows and the text stand outside where the
-	// distance is too small for them; filled in by the drawing.
 }
 
 // arrow lengths in dp.
@@ -95,15 +95,13 @@ func (d *Drawing) dimensionText(a, b, u Pt, m Dimension) Rect {
 	w := d.Fonts.Width(m.Text, m.Size, m.Bold)
 	mid := a.Add(b).Mul(0.5)
 	if room := b.Sub(a).Len() - 2*arrowLong; w > room {
-		mid = d.outsideText(a, b, u, w)
+		if math.Abs(u.X) < 1e-6 {
+			return d.Text(Pt{mid.X + 8, mid.Y + CapHeight*m.Size/2}, m.Text, Style{Size: m.Size, Bold: m.Bold, Ink: Line, Knock: true})
+		}
+		mid = b.Add(u.Mul(2*arrowLong + w/2 + 2))
 	}
 	at := mid.Add(up.Mul(4))
 	return d.Text(at, m.Text, Style{Size: m.Size, Bold: m.Bold, Ink: Line, Align: Middle, Turn: math.Atan2(dir.Y, dir.X), Knock: true})
-}
-
-// outsideText places the middle of a text beyond b, on the line's extension.
-func (d *Drawing) outsideText(_, b, u Pt, w float64) Pt {
-	return b.Add(u.Mul(2*arrowLong + w/2 + 2))
 }
 
 // BreakLine draws the long thin zigzag of ISO 128 across a view from a to b:

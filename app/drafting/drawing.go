@@ -214,3 +214,7 @@ func (d *Drawing) Paragraph(r Rect, s string, st Style) float64 {
 func (d *Drawing) Height(width float64, s string, st Style) float64 {
 	return float64(len(d.Fonts.Wrap(s, st.Size, st.Bold, width))) * Leading * st.Size
 }
+
+// DpPerMM is how many dp a millimetre of a screen has by definition of the dp:
+// 160 to the inch.
+const DpPerMM = 160 / 25.4

@@ -1,0 +1,259 @@
+package sheet
+
+import (
+	"fmt"
+	"math"
+
+	"halfvalue/app/desk"
+	"halfvalue/app/drafting"
+	"halfvalue/app/touch"
+	"halfvalue/exposure/plan"
+	"halfvalue/materials"
+)
+
+// band is one horizontal piece of the detail: a layer, a gap, a screen, the
+// film.
+type band struct {
+	name, value string
+	family      string
+	height      float64
+	field       string // dial
+	choice      string // chooser
+	solid       bool   // filled: lead screens
+	film        bool
+	gap         bool
+	shortened   bool // drawn thinner or thicker than to scale
+}
+
+// detailView draws the stack from the part's source side to the film enlarged:
+// layers hatched by family, the IQI in its place, screens and film.
+func (u *UI) detailView(r drafting.Rect) {
+	b := &u.bench
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y0 + touch.Unit}, drafting.Pt{X: r.X0, Y: r.Y1 - touch.Unit}, drafting.Hair, drafting.Ghost)
+	small := u.look.Small()
+	in := drafting.Rect{X0: r.X0 + 20, Y0: r.Y0 + small*2.2 + 24, X1: r.X1 - touch.Unit, Y1: r.Y1 - small*2 - touch.Unit}
+	bands, scale := u.bands(in.H())
+	if len(bands) == 0 || in.H() < 60 {
+		return
+	}
+	total := 0.0
+	for _, d := range bands {
+		total += d.height
+	}
+	y := in.Y0 + math.Max(0, (in.H()-total)/2)
+	width := math.Min(in.W()*0.42, 150)
+	stack := drafting.Rect{X0: in.X0, X1: in.X0 + width, Y0: y, Y1: y + total}
+	b.Fill(drafting.Box(drafting.Rect{X0: stack.X0, Y0: stack.Y0 - 22, X1: stack.X1, Y1: stack.Y1}), drafting.BeamWash)
+	u.iqi(stack, bands, small)
+	for _, d := range bands {
+		u.band(drafting.Rect{X0: stack.X0, Y0: y, X1: stack.X1, Y1: y + d.height}, in.X1, d, small)
+		y += d.height
+	}
+	text := "Section A " + ratio(scale)
+	for _, d := range bands {
+		if d.shortened {
+			text = "Section A, not to scale"
+		}
+	}
+	u.title(r, text)
+}
+
+// bands builds the stack for a height and says at which scale.
+func (u *UI) bands(height float64) ([]band, float64) {
+	p := u.s.Filled
+	least := math.Max(u.look.Small()*2.6, 30)
+	list := append(u.partBands(p), u.filmBands(p)...)
+	fixed, mm, n := 0.0, 0.0, 0
+	for _, d := range list {
+		if d.height < 0 {
+			fixed -= d.height
+		} else {
+			mm += d.height
+			n++
+		}
+	}
+	if n == 0 || mm <= 0 {
+		return nil, 0
+	}
+	scale := math.Max((height-fixed)/mm, 0.01)
+	if scale > 10 {
+		scale = 10
+	}
+	for i := range list {
+		d := &list[i]
+		if d.height < 0 {
+			d.height = -d.height
+			continue
+		}
+		want := d.height * scale
+		d.height = math.Max(want, least)
+		d.shortened = d.height > want*1.001
+	}
+	return shrink(list, height, least), scale
+}
+
+// shrink takes from the thickest bands what the thin ones took too much.
+func shrink(list []band, height, least float64) []band {
+	for range 8 {
+		total, loose := 0.0, 0.0
+		for _, d := range list {
+			total += d.height
+			if d.field != "" && d.height > least*1.01 {
+				loose += d.height - least
+			}
+		}
+		over := total - height
+		if over <= 0.5 || loose <= 0 {
+			break
+		}
+		k := math.Max(0, 1-over/loose)
+		for i := range list {
+			if d := &list[i]; d.field != "" && d.height > least*1.01 {
+				d.height = least + (d.height-least)*k
+				d.shortened = true
+			}
+		}
+	}
+	return list
+}
+
+// partBands are the layers, with a pipe's empty bore between its walls and the
+// room between part and film.
+func (u *UI) partBands(p plan.Plan) []band {
+	var out []band
+	units := u.s.Units
+	n := len(p.Part.Layers)
+	for i, l := range p.Part.Layers {
+		out = append(out, band{name: materialTitle(l.Material), value: symbolOf(i, n) + " " + units.Format(desk.Length, l.MM, 4), family: family(l.Material), height: l.MM,
+			field: fmt.Sprintf("part.layers[%d].mm", i), choice: fmt.Sprintf("part.layers[%d].material", i)})
+		if bore := p.DepthMM() - p.Part.TotalMM(); p.Setup.DoubleWall() && n == 2 && i == 0 && bore > 0.5 {
+			out = append(out, band{name: "empty bore", value: units.Format(desk.Length, bore, 4), height: -44, gap: true})
+		}
+	}
+	if gap := p.GapMM(); gap > 0.01 {
+		out = append(out, band{name: "room to the film", value: units.Format(desk.Length, gap, 4), height: -40, gap: true, field: "setup.bMM"})
+	}
+	return out
+}
+
+func symbolOf(i, n int) string {
+	if n == 1 {
+		return "t"
+	}
+	return fmt.Sprintf("t%d", i+1)
+}
+
+func materialTitle(name string) string {
+	m, err := materials.Lookup(name)
+	if err != nil {
+		return name
+	}
+	return m.Title()
+}
+
+// filmBands are screens and film, drawn as symbols.
+func (u *UI) filmBands(p plan.Plan) []band {
+	units := u.s.Units
+	switch d := p.Detector; {
+	case d.Film != nil:
+		return u.cassette("film "+d.Film.Class, "D "+desk.Significant(d.Film.Density, 3), d.Film.ScreensMM, "detector.film")
+	case d.Plate != nil:
+		return u.cassette("imaging plate, "+units.Format(desk.Micron, d.Plate.PixelUM, 3), "SNR "+desk.Significant(d.Plate.SNRn, 3), d.Plate.ScreensMM, "detector.plate")
+	case d.Panel != nil:
+		return u.cassette("flat panel, "+units.Format(desk.Micron, d.Panel.PixelUM, 3), "SNR "+desk.Significant(d.Panel.SNRn, 3), nil, "detector.panel")
+	}
+	return nil
+}
+
+func (u *UI) cassette(name, value string, screens *[2]float64, prefix string) []band {
+	fields := map[string]string{"detector.film": "detector.film.density", "detector.plate": "detector.plate.snrN", "detector.panel": "detector.panel.snrN"}
+	choice := ""
+	if prefix == "detector.film" {
+		choice = "detector.film.class"
+	}
+	film := band{name: name, value: value, height: -math.Max(u.look.Target, u.look.Small()*3.4), film: true, field: fields[prefix], choice: choice}
+	if screens == nil {
+		return []band{film}
+	}
+	front := band{height: -7, solid: true}
+	film.name += fmt.Sprintf(", Pb %g + %g", screens[0], screens[1])
+	return []band{front, film, front}
+}
+
+// band draws one piece of the stack, its name at the right, and its targets.
+func (u *UI) band(r drafting.Rect, right float64, d band, small float64) {
+	b := &u.bench
+	switch {
+	case d.solid:
+		b.Fill(drafting.Box(r.Inset(1)), drafting.Line)
+		return
+	case d.film:
+		b.Fill(drafting.Box(r), drafting.Sheet)
+		for _, k := range []float64{0.38, 0.5, 0.62} {
+			y := r.Y0 + r.H()*k
+			b.Line(drafting.Pt{X: r.X0, Y: y}, drafting.Pt{X: r.X1, Y: y}, drafting.Medium, drafting.Line)
+		}
+	case d.gap:
+		b.Fill(drafting.Box(r), drafting.BeamWash)
+		b.BreakLine(drafting.Pt{X: r.X0 - 6, Y: r.Mid().Y}, drafting.Pt{X: r.X1 + 6, Y: r.Mid().Y}, drafting.Line)
+	default:
+		b.Fill(drafting.Box(r), drafting.Sheet)
+		b.Hatch(drafting.Box(r), d.family, drafting.Line)
+	}
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Medium, drafting.Line)
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Medium, drafting.Line)
+	u.bandText(r, right, d, small)
+}
+
+// bandText writes value and name right of the stack; both can be touched.
+func (u *UI) bandText(r drafting.Rect, right float64, d band, small float64) {
+	b := &u.bench
+	if !d.gap && !d.film {
+		x := r.X1 + 14
+		b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: r.Y0}, B: drafting.Pt{X: x, Y: r.Y1}, Size: small, Ink: drafting.Line})
+		b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y0}, drafting.Pt{X: x + 4, Y: r.Y0}, drafting.Hair, drafting.Faint)
+		b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y1}, drafting.Pt{X: x + 4, Y: r.Y1}, drafting.Hair, drafting.Faint)
+	}
+	words := drafting.Rect{X0: r.X1 + 26, X1: right}
+	bold := drafting.Style{Size: small, Bold: true, Ink: drafting.Line}
+	plain := u.look.Caption()
+	lines := b.Height(words.W(), d.value, bold) + b.Height(words.W(), d.name, plain)
+	top := r.Mid().Y - lines/2
+	h := b.Paragraph(drafting.Rect{X0: words.X0, Y0: top, X1: words.X1, Y1: r.Y1}, d.value, bold)
+	b.Paragraph(drafting.Rect{X0: words.X0, Y0: top + h, X1: words.X1, Y1: r.Y1}, d.name, plain)
+	half := u.look.Target / 2
+	if d.field != "" {
+		u.open(drafting.Rect{X0: r.X0, Y0: math.Min(r.Y0, r.Mid().Y-half), X1: r.X1 + 24, Y1: math.Max(r.Y1, r.Mid().Y+half)}, d.field, "")
+	}
+	if d.choice != "" {
+		box := drafting.Rect{X0: words.X0, Y0: math.Min(top, r.Mid().Y-half), X1: right, Y1: math.Max(top+lines, r.Mid().Y+half)}
+		u.openAs(box, "Choose "+d.name, desk.Panel{Kind: desk.ChoicePanel, Field: d.choice})
+	}
+}
+
+// iqi draws the wires of the indicator in section where it lies: on the
+// source side, at the film where only that side can be reached.
+func (u *UI) iqi(stack drafting.Rect, bands []band, small float64) {
+	b := &u.bench
+	p := u.s.Filled
+	text, y := "IQI, source side", stack.Y0
+	if p.Setup.Kind == plan.DoubleWallSingleImage || p.Setup.Kind == plan.Panoramic {
+		text = "IQI, film side"
+		for _, d := range bands {
+			if d.film || d.solid {
+				break
+			}
+			y += d.height
+		}
+	}
+	x := stack.X0 + 14
+	for _, r := range []float64{3.6, 3, 2.4, 2, 1.6, 1.2} {
+		b.Fill(drafting.Circle(drafting.Pt{X: x, Y: y - r}, r), drafting.Line)
+		x += 11
+	}
+	if y == stack.Y0 {
+		b.Text(drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}, text, drafting.Style{Size: small, Ink: drafting.Faint})
+		return
+	}
+	b.Text(drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}, text+" F", drafting.Style{Size: small, Ink: drafting.Faint})
+}

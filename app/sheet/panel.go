@@ -1,0 +1,135 @@
+package sheet
+
+import (
+	"math"
+
+	"halfvalue/app/desk"
+	"halfvalue/app/drafting"
+	"halfvalue/app/touch"
+)
+
+// panelHeight is how high the open panel wants to be in a width.
+func (u *UI) panelHeight(width float64) float64 {
+	pad := 2.0 * touch.Unit
+	switch u.s.Panel.Kind {
+	case desk.DialPanel:
+		h := u.dial.Height(&u.bench)
+		if !u.besides(width) {
+			h += u.stripHeight() + touch.Unit
+		}
+		return h + pad
+	case desk.LogPanel:
+		return u.logHeight(width) + pad
+	case desk.CheckPanel:
+		return 300*u.look.Text + pad
+	}
+	return 460 * math.Sqrt(u.look.Text)
+}
+
+// besides says whether dial and strip stand next to each other.
+func (u *UI) besides(width float64) bool { return width >= 680 }
+
+func (u *UI) stripHeight() float64 { return 110 + u.look.Small()*3 }
+
+// panelIn draws the open panel.
+func (u *UI) panelIn(r drafting.Rect) {
+	b := &u.bench
+	b.Cover("panel", r)
+	b.Fill(drafting.Box(r), drafting.Sheet)
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Bold, drafting.Line)
+	in := r.Inset(touch.Unit)
+	shut, rest := in.CutRight(u.look.Target)
+	shut.Y1 = shut.Y0 + u.look.Target
+	b.Button(touch.Button{Box: shut, Label: "Close", Symbol: b.Cross, Do: u.do(desk.Close{})})
+	_, rest = rest, drafting.Rect{X0: rest.X0, Y0: rest.Y0, X1: rest.X1 - touch.Unit, Y1: rest.Y1}
+	rest.X1 = shut.X0 - touch.Unit
+	switch u.s.Panel.Kind {
+	case desk.DialPanel:
+		u.dialPanel(rest, in)
+	case desk.ChoicePanel:
+		u.choicePanel(rest)
+	case desk.CheckPanel:
+		u.checkPanel(rest)
+	case desk.WorkingPanel:
+		u.workingPanel(rest, "Working", u.s.Answer.Working)
+	case desk.LogPanel:
+		u.logPanel(rest)
+	}
+}
+
+// dialPanel draws dial and trade-off strip. The rows below the close button
+// use the whole width.
+func (u *UI) dialPanel(rest, in drafting.Rect) {
+	q, ok := desk.QuantityOf(u.s.Plan, u.s.Panel.Field)
+	if !ok {
+		return
+	}
+	strip, dial := drafting.Rect{}, rest
+	if u.besides(in.W() + 2*touch.Unit) {
+		strip, dial = rest.CutLeft(math.Min(rest.W()*0.48, 460))
+		_, dial = dial.CutLeft(2 * touch.Unit)
+	} else {
+		dial, strip = rest.CutTop(u.dial.Height(&u.bench))
+		_, strip = strip.CutTop(touch.Unit)
+		strip.X1 = in.X1
+	}
+	u.dial.Layout(&u.bench, dial, u.dialSpec(q))
+	u.tradeOff(strip, q)
+}
+
+func (u *UI) dialSpec(q desk.Quantity) touch.DialSpec {
+	units := u.s.Units
+	return touch.DialSpec{
+		Field: q.Field, Label: q.Label(), Value: q.Value, Text: q.Text(units), Min: q.Min, Max: q.Max, Log: q.Log,
+		Step:   func(v float64) float64 { return u.step(q, v) },
+		Usual:  q.UsualIn(units),
+		Figure: func(v float64) string { f, _ := units.In(q.Kind, v); return desk.Significant(f, 4) },
+		Units:  desk.TypedUnits(q.Kind, units),
+		Set:    func(v float64, more bool) { u.emit(desk.Set{Field: q.Field, To: v, More: more}) },
+		Typed:  func(text string) { u.emit(desk.Type{Field: q.Field, Text: text}) },
+		Close:  func() { u.emit(desk.Close{}) },
+	}
+}
+
+// step is a quantity's step in the shown units: a round figure of those.
+func (u *UI) step(q desk.Quantity, v float64) float64 {
+	f, _ := u.s.Units.In(q.Kind, 1)
+	if f == 1 {
+		return q.Step(v)
+	}
+	return u.s.Units.RoundStep(q.Kind, q.Step(v))
+}
+
+// tradeOff draws the strip of the open dial.
+func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
+	c := u.s.Curve
+	if c.Field != q.Field {
+		return
+	}
+	units := u.s.Units
+	points := make([]touch.StripPoint, len(c.Points))
+	for i, p := range c.Points {
+		points[i] = touch.StripPoint{X: p.X, Y: p.Seconds, Short: p.Short, Gap: p.Refused}
+	}
+	u.strip.Layout(&u.bench, r, touch.StripSpec{
+		Field: q.Field, Label: q.Label(), Points: points, Lo: c.From, Hi: c.To, Log: q.Log,
+		Now:     touch.StripPoint{X: q.Value, Y: u.s.Answer.Exposure.Seconds},
+		XFigure: func(v float64) string { f, _ := units.In(q.Kind, v); return desk.Significant(f, 3) },
+		YFigure: shortClock,
+		Read: func(p touch.StripPoint) string {
+			t := q.Symbol + " " + units.Format(q.Kind, p.X, 3) + ": " + desk.Clock(p.Y)
+			if p.Short {
+				t += ", a rule falls short"
+			}
+			return t
+		},
+	})
+}
+
+// shortClock writes a time on an axis.
+func shortClock(s float64) string {
+	if s >= 120 {
+		return desk.Significant(s/60, 2) + " min"
+	}
+	return desk.Significant(s, 2) + " s"
+}

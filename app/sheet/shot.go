@@ -1,0 +1,143 @@
+package sheet
+
+import (
+	"math"
+
+	"halfvalue/app/desk"
+	"halfvalue/app/drafting"
+	"halfvalue/app/touch"
+)
+
+// shotSheet draws the Shot sheet: the drawing, the stamps, the title block,
+// and the panel that is open.
+func (u *UI) shotSheet(area drafting.Rect) {
+	b := &u.bench
+	b.Frame(area, drafting.Bold, drafting.Line)
+	in := area.Inset(drafting.Bold)
+	if wide(b.Area) {
+		u.shotWide(in)
+		return
+	}
+	u.shotTall(in)
+}
+
+// shotWide puts the title block at the right of the drawing.
+func (u *UI) shotWide(in drafting.Rect) {
+	b := &u.bench
+	share := 0.30 + 0.14*(u.look.Text-1)
+	block, view := in.CutRight(math.Max(300, in.W()*share))
+	b.Line(drafting.Pt{X: block.X0, Y: block.Y0}, drafting.Pt{X: block.X0, Y: block.Y1}, drafting.Bold, drafting.Line)
+	u.titleBlock(block)
+	if u.s.Panel.Kind != desk.NoPanel {
+		view = u.panelBelow(view, 0.86)
+	} else {
+		view = u.stamps(view)
+	}
+	u.drawing(view)
+}
+
+// shotTall stacks the drawing over the title block.
+func (u *UI) shotTall(in drafting.Rect) {
+	b := &u.bench
+	answer := u.answerHeight(in.W())
+	if u.s.Panel.Kind != desk.NoPanel {
+		need := u.panelHeight(in.W())
+		panel, rest := in.CutBottom(math.Min(need, in.H()*0.72))
+		band, view := rest.CutBottom(answer)
+		u.panelIn(panel)
+		u.answerBand(band)
+		if view.H() > 120 {
+			u.drawing(view)
+		}
+		return
+	}
+	view, rest := in.CutTop(in.H() * 0.5)
+	b.Line(drafting.Pt{X: rest.X0, Y: rest.Y0}, drafting.Pt{X: rest.X1, Y: rest.Y0}, drafting.Bold, drafting.Line)
+	view = u.stamps(view)
+	u.drawing(view)
+	u.titleBlock(rest)
+}
+
+// panelBelow draws the open panel at the foot of a view and returns what is
+// left of it.
+func (u *UI) panelBelow(view drafting.Rect, most float64) drafting.Rect {
+	need := u.panelHeight(view.W())
+	panel, rest := view.CutBottom(math.Min(need, view.H()*most))
+	u.panelIn(panel)
+	return rest
+}
+
+// stamps draws the checks in a grid at the foot of a view; without rules
+// there is none.
+func (u *UI) stamps(view drafting.Rect) drafting.Rect {
+	checks := u.s.Answer.Checks
+	if len(checks) == 0 {
+		return view
+	}
+	b := &u.bench
+	columns := max(1, int(view.W()/(210*u.look.Text)))
+	width := (view.W() - touch.Unit*float64(columns+1)) / float64(columns)
+	height := 0.0
+	for _, c := range checks {
+		height = math.Max(height, b.StampHeight(c.Name, u.checkText(c), width))
+	}
+	rows := (len(checks) + columns - 1) / columns
+	full := float64(rows)*(height+touch.Unit) + touch.Unit
+	box, rest := view.CutBottom(math.Min(full, view.H()*0.4))
+	b.Line(drafting.Pt{X: box.X0, Y: box.Y0}, drafting.Pt{X: box.X1, Y: box.Y0}, drafting.Thin, drafting.Line)
+	b.Scroll("Checks", box, full, func(r drafting.Rect) {
+		w := (r.W() - touch.Unit*float64(columns+1)) / float64(columns)
+		for i, c := range checks {
+			x := r.X0 + touch.Unit + float64(i%columns)*(w+touch.Unit)
+			y := r.Y0 + touch.Unit + float64(i/columns)*(height+touch.Unit)
+			u.stamp(drafting.Rect{X0: x, Y0: y, X1: x + w, Y1: y + height}, c)
+		}
+	})
+	return rest
+}
+
+func (u *UI) stamp(r drafting.Rect, c desk.Check) {
+	mark := map[string]touch.Mark{desk.Holds: touch.Holds, desk.Short: touch.Struck}
+	m, ok := mark[c.Verdict]
+	if !ok {
+		m = touch.Open
+	}
+	text := u.checkText(c)
+	u.bench.Stamp(touch.Stamp{Box: r, Mark: m, Name: c.Name, Text: text, Label: c.Name + ": " + verdictWord(c.Verdict) + ". " + text,
+		Do: u.toggle(desk.Panel{Kind: desk.CheckPanel, Field: c.ID})})
+}
+
+func verdictWord(v string) string {
+	switch v {
+	case desk.Holds:
+		return "holds"
+	case desk.Short:
+		return "falls short"
+	}
+	return "not decided"
+}
+
+// checkText is the figure against its limit.
+func (u *UI) checkText(c desk.Check) string {
+	if c.Text != "" {
+		return c.Text
+	}
+	t := verdictWord(c.Verdict)
+	if c.Value != 0 || c.Limit != 0 {
+		t += ": " + desk.Significant(c.Value, 4) + " against " + desk.Significant(c.Limit, 4) + " " + c.Unit
+	}
+	return t
+}
+
+// drawing draws side view and detail next to each other, the detail only
+// where there is room for both.
+func (u *UI) drawing(view drafting.Rect) {
+	side, detail := view, drafting.Rect{}
+	if view.W() >= 340*math.Min(u.look.Text, 1.5) {
+		detail, side = view.CutRight(math.Min(view.W()*0.46, 400*u.look.Text))
+	}
+	u.sideView(side)
+	if !detail.Empty() {
+		u.detailView(detail)
+	}
+}

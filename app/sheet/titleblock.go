@@ -1,0 +1,163 @@
+package sheet
+
+import (
+	"math"
+
+	"halfvalue/app/desk"
+	"halfvalue/app/drafting"
+	"halfvalue/app/touch"
+)
+
+// cell is one field of the title block.
+type cell struct {
+	caption, value, note string
+	big                  bool // the sheet's answer
+	rope                 bool // marked as the boundary
+	span                 int  // columns, 1 or 2
+	panel                desk.Panel
+	label                string // of its target
+}
+
+// titleBlock draws the answer and what the shot rests on, in cells that can
+// be touched, and the buttons to log and to see the working.
+func (u *UI) titleBlock(r drafting.Rect) {
+	b := &u.bench
+	foot, cells := r.CutBottom(u.look.Target + 2*touch.Unit)
+	buttons := foot.Inset(touch.Unit).Columns(2, touch.Unit)
+	b.Button(touch.Button{Box: buttons[0], Label: "Log shot", Strong: true, Off: u.s.Fault != "" || u.s.Book.Fault != "", Do: u.toggle(desk.Panel{Kind: desk.LogPanel})})
+	b.Button(touch.Button{Box: buttons[1], Label: "Working", Selected: u.s.Panel.Kind == desk.WorkingPanel, Do: u.toggle(desk.Panel{Kind: desk.WorkingPanel})})
+	b.Line(drafting.Pt{X: foot.X0, Y: foot.Y0}, drafting.Pt{X: foot.X1, Y: foot.Y0}, drafting.Thin, drafting.Line)
+	u.grid("Title block", cells, u.shotCells())
+}
+
+// grid flows cells into rows; what does not fit scrolls.
+func (u *UI) grid(key string, r drafting.Rect, cells []cell) {
+	b := &u.bench
+	height := u.gridRows(r.W(), cells, nil)
+	width := b.ScrollWidth(r, height)
+	height = u.gridRows(width, cells, nil)
+	b.Scroll(key, r, height, func(in drafting.Rect) {
+		u.gridRows(in.W(), cells, func(box drafting.Rect, c cell) { u.cell(box.Moved(in.X0, in.Y0), c) })
+	})
+}
+
+// columns is into how many columns a title block of a width is parted.
+func (u *UI) columns(width float64) int {
+	return max(1, min(4, int(width/(146*u.look.Text))))
+}
+
+// gridRows places cells and returns the height of all rows.
+func (u *UI) gridRows(width float64, cells []cell, place func(drafting.Rect, cell)) float64 {
+	n := u.columns(width)
+	unit := width / float64(n)
+	y := 0.0
+	for i := 0; i < len(cells); {
+		used, row := 0, i
+		for i < len(cells) && used+min(cells[i].span, n) <= n {
+			used += min(cells[i].span, n)
+			i++
+		}
+		h, x, free := 0.0, 0.0, n-used
+		widths := make([]float64, 0, 4)
+		for k := row; k < i; k++ {
+			w := unit * float64(min(cells[k].span, n))
+			if k == i-1 {
+				w += unit * float64(free)
+			}
+			widths = append(widths, w)
+			h = math.Max(h, u.cellHeight(w, cells[k]))
+		}
+		for k := row; k < i; k++ {
+			w := widths[k-row]
+			if place != nil {
+				place(drafting.Rect{X0: x, Y0: y, X1: x + w, Y1: y + h}, cells[k])
+			}
+			x += w
+		}
+		y += h
+	}
+	return y
+}
+
+func (u *UI) valueStyle(c cell) drafting.Style {
+	if c.big {
+		return u.look.Answer()
+	}
+	return u.look.Strong()
+}
+
+func (u *UI) cellHeight(width float64, c cell) float64 {
+	b := &u.bench
+	w := width - 2*touch.Unit - u.ropeRoom(c)
+	h := 1.5*touch.Unit + b.Height(w, c.caption, u.look.Caption()) + b.Height(w, c.value, u.valueStyle(c))
+	if c.note != "" {
+		h += b.Height(w, c.note, u.look.Caption())
+	}
+	if c.panel.Kind != desk.NoPanel {
+		h = math.Max(h, u.look.Target)
+	}
+	return h
+}
+
+// ropeRoom is the width of the cord that marks the boundary's cell.
+func (u *UI) ropeRoom(c cell) float64 {
+	if c.rope {
+		return touch.Unit + 4
+	}
+	return 0
+}
+
+func (u *UI) cell(r drafting.Rect, c cell) {
+	b := &u.bench
+	open := c.panel.Kind != desk.NoPanel && u.s.Panel == c.panel
+	switch {
+	case open || (c.label != "" && b.Pressed(c.label)):
+		b.Fill(drafting.Box(r), drafting.BeamWash)
+	case c.panel.Kind != desk.NoPanel:
+		b.Fill(drafting.Box(r.Inset(0.5)), drafting.Block)
+	}
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Hair, drafting.Faint)
+	b.Line(drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Hair, drafting.Faint)
+	in := drafting.Rect{X0: r.X0 + touch.Unit + u.ropeRoom(c), Y0: r.Y0 + 0.6*touch.Unit, X1: r.X1 - touch.Unit, Y1: r.Y1}
+	if c.rope {
+		b.Line(drafting.Pt{X: r.X0 + 8, Y: r.Y0 + 6}, drafting.Pt{X: r.X0 + 8, Y: r.Y1 - 6}, 4, drafting.Rope, drafting.Cord()...)
+	}
+	in.Y0 += b.Paragraph(in, c.caption, u.look.Caption())
+	in.Y0 += b.Paragraph(in, c.value, u.valueStyle(c))
+	if c.note != "" {
+		b.Paragraph(in, c.note, u.look.Caption())
+	}
+	text := c.caption + ", " + c.value
+	if c.note != "" {
+		text += ", " + c.note
+	}
+	if c.panel.Kind == desk.NoPanel {
+		b.Words(r, text)
+		return
+	}
+	label := c.label
+	if label == "" {
+		label = text
+	}
+	b.Target(r, label, u.toggle(c.panel))
+	b.Ring(label, r)
+}
+
+// answerHeight is the height of the band that keeps the answer in view while a
+// panel is open.
+func (u *UI) answerHeight(width float64) float64 {
+	return u.gridRows(width, u.bandCells(), nil)
+}
+
+func (u *UI) answerBand(r drafting.Rect) {
+	b := &u.bench
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Bold, drafting.Line)
+	u.gridRows(r.W(), u.bandCells(), func(box drafting.Rect, c cell) { u.cell(box.Moved(r.X0, r.Y0), c) })
+}
+
+func (u *UI) bandCells() []cell {
+	t, r := u.timeCell(), u.ropeCell()
+	t.big, r.note = false, ""
+	t.span, r.span = 1, 1
+	return []cell{t, r}
+}

@@ -1,0 +1,344 @@
+package touch
+
+import (
+	"image"
+	"time"
+
+	"gioui.org/gesture"
+	"gioui.org/io/event"
+	"gioui.org/io/pointer"
+	"gioui.org/io/semantic"
+	"gioui.org/layout"
+	"gioui.org/op"
+	"gioui.org/op/clip"
+	"gioui.org/op/paint"
+	"gioui.org/widget"
+
+	"halfvalue/app/drafting"
+	"halfvalue/app/drafting/screen"
+)
+
+// Bench builds frames and keeps what outlives one: which target is pressed,
+// how far an area is scrolled. The zero Bench is ready.
+type Bench struct {
+	*drafting.Drawing
+	Look *Look
+	Gtx  layout.Context
+
+	paint   screen.Painter
+	targets []target
+	clicks  map[string]*clickState
+	drags   map[string]*dragState
+	scrolls map[string]*scrollState
+	shade   drafting.Rect // targets that follow are cut to it; empty: none
+	keys    keyboard
+}
+
+type targetKind uint8
+
+const (
+	clickTarget targetKind = iota
+	dragTarget
+	scrollTarget
+	endScroll
+	wordTarget
+	coverTarget
+)
+
+type target struct {
+	kind     targetKind
+	key      string
+	label    string
+	box      drafting.Rect
+	do       func()
+	hold     func(repeat bool)
+	drag     func(Drag)
+	selected bool
+}
+
+type clickState struct {
+	widget.Clickable
+	since   time.Time // when it was first seen pressed; zero: not pressed
+	repeats int
+	seen    bool
+}
+
+// Begin starts a frame: it runs what was touched since the last one and clears
+// the drawing. The area is the whole of the constraints.
+func (b *Bench) Begin(gtx layout.Context, look *Look) {
+	b.Gtx, b.Look = gtx, look
+	if b.clicks == nil {
+		b.clicks, b.drags, b.scrolls = map[string]*clickState{}, map[string]*dragState{}, map[string]*scrollState{}
+	}
+	b.runTouched()
+	size := gtx.Constraints.Max
+	area := drafting.Rect{X1: float64(size.X) / b.scale(), Y1: float64(size.Y) / b.scale()}
+	if b.Drawing == nil {
+		b.Drawing = drafting.New(look.Fonts, area)
+	}
+	b.Drawing.Reset(area)
+	b.targets = b.targets[:0]
+	b.shade = drafting.Rect{}
+}
+
+func (b *Bench) scale() float64 {
+	if s := float64(b.Gtx.Metric.PxPerDp); s > 0 {
+		return s
+	}
+	return 1
+}
+
+// runTouched acts on the targets of the last frame.
+func (b *Bench) runTouched() {
+	for i := range b.targets {
+		t := &b.targets[i]
+		switch t.kind {
+		case clickTarget:
+			b.runClick(t, b.clicks[t.key])
+		case dragTarget:
+			b.runDrag(t, b.drags[t.key])
+		case scrollTarget:
+			b.runScroll(b.scrolls[t.key])
+		}
+	}
+}
+
+// How long a press lasts until it repeats, and how fast it then does.
+const (
+	holdAfter = 400 * time.Millisecond
+	holdEvery = 80 * time.Millisecond
+)
+
+func (b *Bench) runClick(t *target, s *clickState) {
+	clicked := false
+	for s.Clicked(b.Gtx) {
+		clicked = true
+	}
+	held := s.repeats > 0
+	if t.hold != nil {
+		b.runHold(t, s)
+	}
+	switch {
+	case clicked && held && t.hold != nil:
+		t.hold(false)
+	case clicked && t.do != nil:
+		t.do()
+	}
+}
+
+// runHold repeats a press that lasts, faster after a while.
+func (b *Bench) runHold(t *target, s *clickState) {
+	now := b.Gtx.Now
+	if !s.Pressed() {
+		s.since, s.repeats = time.Time{}, 0
+		return
+	}
+	if s.since.IsZero() {
+		s.since = now
+	}
+	due := func() time.Time { return s.since.Add(holdAfter + time.Duration(s.repeats)*holdEvery) }
+	for n := 0; !due().After(now) && n < 8; n++ {
+		s.repeats++
+		t.hold(true)
+	}
+	b.Gtx.Execute(op.InvalidateCmd{At: due()})
+}
+
+// End paints the drawing and registers the targets.
+func (b *Bench) End() layout.Dimensions {
+	gtx := b.Gtx
+	b.paint.Shaper, b.paint.Palette, b.paint.PxPerDp = b.Look.Shaper, b.Look.Palette, float32(b.scale())
+	c := b.Look.Palette[drafting.Sheet]
+	paint.Fill(gtx.Ops, Colour(c))
+	b.paint.Paint(gtx.Ops, b.Drawing)
+	var stack []clip.Stack
+	for i := range b.targets {
+		t := &b.targets[i]
+		switch t.kind {
+		case scrollTarget:
+			stack = append(stack, clip.Rect(b.px(t.box)).Push(gtx.Ops))
+			b.scrolls[t.key].gesture.Add(gtx.Ops)
+		case endScroll:
+			stack[len(stack)-1].Pop()
+			stack = stack[:len(stack)-1]
+		default:
+			b.register(t)
+		}
+	}
+	return layout.Dimensions{Size: gtx.Constraints.Max}
+}
+
+func (b *Bench) register(t *target) {
+	gtx := b.Gtx
+	r := b.px(t.box)
+	defer op.Offset(r.Min).Push(gtx.Ops).Pop()
+	r = r.Sub(r.Min)
+	switch t.kind {
+	case clickTarget:
+		gtx.Constraints = layout.Exact(r.Max)
+		b.clicks[t.key].Layout(gtx, func(gtx layout.Context) layout.Dimensions {
+			semantic.Button.Add(gtx.Ops)
+			b.describe(t)
+			return layout.Dimensions{Size: gtx.Constraints.Min}
+		})
+	case dragTarget:
+		defer clip.Rect(r).Push(gtx.Ops).Pop()
+		b.describe(t)
+		event.Op(gtx.Ops, b.drags[t.key])
+	case wordTarget:
+		defer clip.Rect(r).Push(gtx.Ops).Pop()
+		b.describe(t)
+	case coverTarget:
+		defer clip.Rect(r).Push(gtx.Ops).Pop()
+		event.Op(gtx.Ops, b.dragOf(t.key))
+	}
+}
+
+func (b *Bench) describe(t *target) {
+	semantic.LabelOp(t.label).Add(b.Gtx.Ops)
+	semantic.SelectedOp(t.selected).Add(b.Gtx.Ops)
+}
+
+func (b *Bench) px(r drafting.Rect) image.Rectangle {
+	s := b.scale()
+	at := func(v float64) int { return int(v*s + 0.5) }
+	return image.Rect(at(r.X0), at(r.Y0), at(r.X1), at(r.Y1))
+}
+
+// add names a target, cut to the area that is scrolled if there is one.
+func (b *Bench) add(t target) {
+	if !b.shade.Empty() && t.kind != scrollTarget && t.kind != endScroll {
+		t.box = t.box.And(b.shade)
+	}
+	if t.box.Empty() && t.kind != endScroll {
+		return
+	}
+	b.targets = append(b.targets, t)
+}
+
+// Target names an area that does something when it is touched. The label is
+// what a screen reader says and what tests press.
+func (b *Bench) Target(box drafting.Rect, label string, do func()) {
+	b.targetAs(target{kind: clickTarget, key: label, label: label, box: box, do: do})
+}
+
+func (b *Bench) targetAs(t target) {
+	if b.clicks[t.key] == nil {
+		b.clicks[t.key] = &clickState{}
+	}
+	b.add(t)
+}
+
+// Words gives a screen reader what a part of the drawing says.
+func (b *Bench) Words(box drafting.Rect, text string) {
+	b.add(target{kind: wordTarget, label: text, box: box})
+}
+
+// Cover keeps touches on a panel from reaching what lies under it.
+func (b *Bench) Cover(key string, box drafting.Rect) {
+	b.add(target{kind: coverTarget, key: "cover " + key, box: box})
+}
+
+// Pressed says whether a target is pressed now.
+func (b *Bench) Pressed(key string) bool {
+	s := b.clicks[key]
+	return s != nil && s.Pressed()
+}
+
+// Focused says whether the keyboard acts on a target.
+func (b *Bench) Focused(key string) bool {
+	s := b.clicks[key]
+	return s != nil && b.Gtx.Focused(&s.Clickable)
+}
+
+// Ring draws the ring of the keyboard's focus round a target that has it.
+func (b *Bench) Ring(key string, box drafting.Rect) {
+	if b.Focused(key) {
+		b.Stroke(drafting.Box(box.Inset(3)), drafting.Medium, drafting.Focus, 4, 3)
+	}
+}
+
+// scrollState is how far an area is scrolled.
+type scrollState struct {
+	gesture gesture.Scroll
+	offset  float64 // dp
+	most    float64 // dp
+}
+
+func (b *Bench) runScroll(s *scrollState) {
+	lim := int(s.most * b.scale())
+	at := int(s.offset * b.scale())
+	d := s.gesture.Update(b.Gtx.Metric, b.Gtx.Source, b.Gtx.Now, gesture.Vertical,
+		pointer.ScrollRange{}, pointer.ScrollRange{Min: -at, Max: lim - at})
+	s.offset = min(max(s.offset+float64(d)/b.scale(), 0), s.most)
+}
+
+// Scroll draws content of a height in a box. What does not fit is reached by
+// drag, by wheel and by two buttons at the lower right. The content is drawn by
+// the function into a rectangle of the full height, moved as scrolled.
+func (b *Bench) Scroll(key string, box drafting.Rect, height float64, draw func(drafting.Rect)) {
+	s := b.scrolls[key]
+	if s == nil {
+		s = &scrollState{}
+		b.scrolls[key] = s
+	}
+	view := box
+	if height > box.H()+0.5 {
+		strip, rest := box.CutRight(b.Look.Target)
+		view = rest
+		defer b.scrollButtons(key, strip, s)
+	}
+	s.most = max(0, height-box.H())
+	s.offset = min(s.offset, s.most)
+	b.add(target{kind: scrollTarget, key: key, box: view})
+	outer := b.shade
+	b.shade = view
+	b.Clip(drafting.Box(view))
+	b.Scrolling()
+	draw(drafting.Rect{X0: view.X0, Y0: view.Y0 - s.offset, X1: view.X1, Y1: view.Y0 - s.offset + max(height, view.H())})
+	b.Still()
+	b.Unclip()
+	b.shade = outer
+	b.add(target{kind: endScroll, box: view})
+}
+
+// ScrollWidth is the width that content has in a box of a width when it has a
+// height: the buttons take a column where it does not fit.
+func (b *Bench) ScrollWidth(box drafting.Rect, height float64) float64 {
+	if height > box.H()+0.5 {
+		return box.W() - b.Look.Target
+	}
+	return box.W()
+}
+
+// ScrollTo brings a place of the content to the top of its area.
+func (b *Bench) ScrollTo(key string, at float64) {
+	if s := b.scrolls[key]; s != nil {
+		s.offset = at
+	}
+}
+
+func (b *Bench) scrollButtons(key string, strip drafting.Rect, s *scrollState) {
+	side := min(b.Look.Target, strip.H()/2)
+	page := max(strip.H()-side, side)
+	up := drafting.Rect{X0: strip.X0, Y0: strip.Y0, X1: strip.X1, Y1: strip.Y0 + side}
+	down := drafting.Rect{X0: strip.X0, Y0: strip.Y1 - side, X1: strip.X1, Y1: strip.Y1}
+	b.Line(drafting.Pt{X: strip.Mid().X, Y: up.Y1}, drafting.Pt{X: strip.Mid().X, Y: down.Y0}, drafting.Hair, drafting.Ghost)
+	if run := down.Y0 - up.Y1; run > 24 && s.most > 0 {
+		grip := max(16, run*strip.H()/(strip.H()+s.most))
+		y := up.Y1 + (run-grip)*s.offset/s.most
+		b.Fill(drafting.Box(drafting.Rect{X0: strip.Mid().X - 2, Y0: y, X1: strip.Mid().X + 2, Y1: y + grip}), drafting.Faint)
+	}
+	b.chevron(up, key+": up", drafting.Pt{Y: -1}, s.offset > 0, func() { s.offset = max(0, s.offset-page) })
+	b.chevron(down, key+": down", drafting.Pt{Y: 1}, s.offset < s.most, func() { s.offset = min(s.most, s.offset+page) })
+}
+
+func (b *Bench) chevron(r drafting.Rect, label string, dir drafting.Pt, able bool, do func()) {
+	ink := drafting.Ghost
+	if able {
+		ink = drafting.Line
+		b.Target(r, label, do)
+		b.Ring(label, r)
+	}
+	b.Chevron(r.Mid(), 22, dir, ink)
+}

@@ -1,0 +1,68 @@
+package touch
+
+import "halfvalue/app/drafting"
+
+// Mark is the state of a stamp.
+type Mark uint8
+
+// The three marks differ by shape: a filled field with a tick, a bold frame
+// struck through, a hatched field with a question mark.
+const (
+	Holds Mark = iota
+	Struck
+	Open
+)
+
+// Stamp is one check as it stands on the sheet.
+type Stamp struct {
+	Box   drafting.Rect
+	Mark  Mark
+	Name  string
+	Text  string // figure against limit
+	Label string
+	Do    func()
+}
+
+// Stamp draws a stamp and names its target.
+func (b *Bench) Stamp(s Stamp) {
+	side := min(s.Box.H(), b.Look.Target)
+	field, rest := s.Box.CutLeft(side)
+	b.markField(field, s.Mark)
+	switch s.Mark {
+	case Holds:
+		b.Frame(s.Box, drafting.Thin, drafting.Line)
+	case Struck:
+		b.Frame(s.Box, drafting.Bold, drafting.Rope)
+	case Open:
+		b.Stroke(drafting.Box(s.Box.Inset(0.5)), drafting.Thin, drafting.Line, 5, 4)
+	}
+	in := rest.Inset(Unit)
+	h := b.Paragraph(drafting.Rect{X0: in.X0, Y0: in.Y0 - 4, X1: in.X1, Y1: in.Y1}, s.Name, drafting.Style{Size: b.Look.Small(), Bold: true, Ink: drafting.Line})
+	b.Paragraph(drafting.Rect{X0: in.X0, Y0: in.Y0 - 4 + h, X1: in.X1, Y1: in.Y1}, s.Text, drafting.Style{Size: b.Look.Small(), Ink: drafting.Line})
+	b.Target(s.Box, s.Label, s.Do)
+	b.Ring(s.Label, s.Box)
+}
+
+func (b *Bench) markField(r drafting.Rect, m Mark) {
+	switch m {
+	case Holds:
+		b.Fill(drafting.Box(r), drafting.Line)
+		b.Check(r.Mid(), 24, drafting.Reverse)
+	case Struck:
+		b.Fill(drafting.Box(r), drafting.RopeWash)
+		b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Bold, drafting.Rope)
+		b.Line(drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Thin, drafting.Rope)
+	case Open:
+		b.Hatch(drafting.Box(r.Inset(1)), "", drafting.Faint)
+		b.TextIn(r, "?", drafting.Style{Size: b.Look.Body(), Bold: true, Ink: drafting.Line, Align: drafting.Middle, Knock: true})
+	}
+}
+
+// StampHeight is the height that a stamp needs in a width.
+func (b *Bench) StampHeight(name, text string, width float64) float64 {
+	w := width - b.Look.Target - 2*Unit
+	small := drafting.Style{Size: b.Look.Small(), Bold: true}
+	h := b.Height(w, name, small)
+	small.Bold = false
+	return max(b.Look.Target, h+b.Height(w, text, small)+2*Unit-6)
+}
