@@ -1,0 +1,271 @@
+package exposure
+
+import (
+	"fmt"
+	"math"
+
+	"halfvalue/exposure/beam"
+	"halfvalue/exposure/detector"
+	"halfvalue/exposure/plan"
+	"halfvalue/exposure/transport"
+	"halfvalue/materials"
+)
+
+// shot is a plan made ready: its spectrum, strength and receptor.
+type shot struct {
+	engine
+	plan     plan.Plan // normalised
+	spectrum beam.Spectrum
+	strength float64 // mA, or GBq at the plan's time
+	decay    float64 // activity against the certificate's; 1 with a tube
+	perS     float64 // decay constant, 1/s; 0 with a tube
+	receptor receptor
+	ref      field        // behind the part's layers, once exposed
+	bare     receptorRate // at the film with no part at all
+}
+
+// field is what arrives at the detector behind some layers, per second, before
+// inverse square is asked about anything else.
+type field struct {
+	receptorRate // what the detector makes of it
+	exit         transport.Exit
+	depthMM      float64
+}
+
+func newShot(p plan.Plan, e engine) (*shot, error) {
+	s := &shot{engine: e, plan: p, decay: 1}
+	var err error
+	switch src := p.Source; {
+	case src.Tube != nil:
+		s.strength = src.Tube.MA
+		s.spectrum, err = beam.Tube(*src.Tube)
+	default:
+		var n beam.Nuclide
+		if n, err = beam.NuclideByName(src.Sealed.Nuclide); err != nil {
+			break
+		}
+		s.decay = n.DecayFactor(src.Sealed.Assayed, p.At)
+		s.strength = src.Sealed.ActivityGBq * s.decay
+		s.perS = math.Ln2 / (n.HalfLifeDays * 86400)
+		s.spectrum, err = beam.Sealed(*src.Sealed)
+	}
+	if err != nil {
+		return nil, fmt.Errorf("source: %w", err)
+	}
+	if s.receptor, err = newReceptor(p.Detector); err != nil {
+		return nil, err
+	}
+	s.bare = s.receptor.open(s.at(0)).times(s.square())
+	return s, nil
+}
+
+// depthMM is the material along the ray.
+func depthMM(layers []plan.Layer) float64 {
+	var sum float64
+	for _, l := range layers {
+		sum += l.MM
+	}
+	return sum
+}
+
+// at gives the spectrum on the part: inverse square to the film, and the air
+// that is not taken up by the part.
+func (s *shot) at(depth float64) beam.Spectrum {
+	sp := s.spectrum
+	if air := s.plan.Setup.SFDMM - depth; !s.noAir && air > 0 {
+		sp = sp.InAir(air)
+	}
+	return sp
+}
+
+// behind reckons what the detector sees behind the layers. More of a part
+// never counts as less time: where scatter in a light, thin part would make
+// the detector see more than without the part, it is held at what it would see
+// without.
+func (s *shot) behind(layers []plan.Layer) (field, error) {
+	stack, err := stackOf(layers)
+	if err != nil {
+		return field{}, err
+	}
+	f := field{depthMM: depthMM(layers)}
+	sp := s.at(f.depthMM)
+	if f.exit, err = transport.Slab(stack, sp.KeV, sp.PerCM2); err != nil {
+		return field{}, fmt.Errorf("part: %w", err)
+	}
+	f.receptorRate = s.receptor.rate(f.exit, sp.KeV).times(s.square())
+	if s.bare.total() < f.total() {
+		f.receptorRate = s.bare
+	}
+	return f, nil
+}
+
+// square is the source's strength at the film against that at 1 m.
+func (s *shot) square() float64 {
+	q := 1000 / s.plan.Setup.SFDMM
+	return q * q * s.strength
+}
+
+func stackOf(layers []plan.Layer) ([]transport.Layer, error) {
+	stack := make([]transport.Layer, len(layers))
+	for i, l := range layers {
+		m, err := materials.Lookup(l.Material)
+		if err != nil {
+			return nil, err
+		}
+		stack[i] = transport.Layer{Material: m, MM: l.MM}
+	}
+	return stack, nil
+}
+
+// seconds turns the time at the strength of the start into the time that a
+// decaying source takes; false when it fades before.
+func (s *shot) seconds(atStart float64) (float64, bool) {
+	if s.perS == 0 {
+		return atStart, true
+	}
+	x := s.perS * atStart
+	if x >= 1 {
+		return 0, false
+	}
+	return -math.Log1p(-x) / s.perS, true
+}
+
+// atStart is the inverse of seconds.
+func (s *shot) atStart(seconds float64) float64 {
+	if s.perS == 0 {
+		return seconds
+	}
+	return -math.Expm1(-s.perS*seconds) / s.perS
+}
+
+// receptor is the detector of a plan.
+type receptor struct {
+	film    *detector.Film
+	density float64
+	screens detector.Screens
+	digital *detector.Layer
+	snrN    float64
+	front   func(keV float64) float64 // transmission of a front screen before a plate
+}
+
+func newReceptor(d plan.Detector) (receptor, error) {
+	var r receptor
+	switch {
+	case d.Film != nil:
+		f, err := detector.FilmByClass(d.Film.Class)
+		if err != nil {
+			return r, err
+		}
+		r.film, r.density = &f, d.Film.Density
+		r.screens = detector.NewScreens(*d.Film.ScreensMM)
+		if most := f.MostDensity(); r.density >= most {
+			return r, &plan.FieldError{Field: "detector.film.density", Value: fmt.Sprint(r.density), Problem: "is beyond what the film reaches",
+				Allowed: fmt.Sprintf("%.2f to %.2f", f.BaseAndFog, most), Mend: "take a lower density"}
+		}
+	case d.Plate != nil:
+		l := detector.Plate()
+		r.digital, r.snrN = &l, d.Plate.SNRn
+		if d.Plate.ScreensMM != nil && d.Plate.ScreensMM[0] > 0 {
+			lead, err := materials.Lookup("Pb")
+			if err != nil {
+				return r, err
+			}
+			mm := d.Plate.ScreensMM[0]
+			r.front = func(keV float64) float64 { return math.Exp(-lead.MuPerMM(keV) * mm) }
+		}
+	case d.Panel != nil:
+		l := detector.Panel()
+		r.digital, r.snrN = &l, d.Panel.SNRn
+	}
+	if r.digital != nil && r.snrN >= r.digital.MostSNRn() {
+		field := "detector.plate.snrN"
+		if d.Panel != nil {
+			field = "detector.panel.snrN"
+		}
+		return r, &plan.FieldError{Field: field, Value: fmt.Sprint(r.snrN), Problem: "is beyond what the detector reaches at any dose",
+			Allowed: fmt.Sprintf("less than %g", r.digital.MostSNRn()), Mend: "take a lower signal to noise ratio"}
+	}
+	return r, nil
+}
+
+// receptorRate is what a detector gathers in a second: for film the dose it
+// answers to, for a digital one the statistics of what it absorbs.
+type receptorRate struct {
+	primary, scatter float64 // mGy/s, film
+	quanta           detector.Quanta
+	strength         float64 // factor on quanta
+}
+
+func (r receptorRate) total() float64 {
+	if r.primary+r.scatter > 0 {
+		return r.primary + r.scatter
+	}
+	return r.quanta.PerUnit() * r.strength
+}
+
+func (r receptorRate) times(f float64) receptorRate {
+	r.primary, r.scatter, r.strength = r.primary*f, r.scatter*f, r.strength*f
+	return r
+}
+
+// rate reads an exit at the energies keV of its primaries.
+func (r receptor) rate(x transport.Exit, keV []float64) receptorRate {
+	out := receptorRate{strength: 1}
+	for i, n := range x.Primary {
+		out.primary += r.take(&out.quanta, keV[i], n)
+	}
+	for i, n := range x.Scatter {
+		out.scatter += r.take(&out.quanta, x.MeanKeV[i], n)
+	}
+	return out
+}
+
+// open reads a beam that met nothing.
+func (r receptor) open(sp beam.Spectrum) receptorRate {
+	out := receptorRate{strength: 1}
+	for i, n := range sp.PerCM2 {
+		out.primary += r.take(&out.quanta, sp.KeV[i], n)
+	}
+	return out
+}
+
+// take counts perCM2 photons of keV: film gives the dose it answers to, a
+// digital layer adds to q.
+func (r receptor) take(q *detector.Quanta, keV, perCM2 float64) float64 {
+	if perCM2 <= 0 {
+		return 0
+	}
+	if r.film != nil {
+		return detector.EquivalentMGy(r.screens.Response(keV) * perCM2)
+	}
+	if r.front != nil {
+		perCM2 *= r.front(keV)
+	}
+	r.digital.Add(q, keV, perCM2)
+	return 0
+}
+
+// wants gives the seconds, at constant strength, that the wanted density or
+// signal to noise ratio takes.
+func (r receptor) wants(at receptorRate) (float64, error) {
+	if r.film != nil {
+		x, err := r.film.DoseMGy(r.density)
+		if err != nil {
+			return 0, err
+		}
+		return x / at.total(), nil
+	}
+	unit, ok := r.digital.Exposure(at.quanta, r.snrN)
+	if !ok {
+		return math.Inf(1), nil
+	}
+	return unit / at.strength, nil
+}
+
+// reading gives density or signal to noise ratio after so many seconds.
+func (r receptor) reading(at receptorRate, seconds float64) float64 {
+	if r.film != nil {
+		return r.film.Density(at.total() * seconds)
+	}
+	return r.digital.SNRn(at.quanta, at.strength*seconds)
+}
