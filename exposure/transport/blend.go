@@ -1,9 +1,12 @@
 package transport
 
 import (
+	"fmt"
 	"math"
+	"strings"
 	"sync"
 
+	"halfvalue/exposure/transport/internal/cells"
 	"halfvalue/materials"
 )
 
@@ -13,13 +16,13 @@ type share struct {
 	weight float64
 }
 
-// blend stands for a material as a mixture of two neighbouring bases, in mean
-// free path space, one pair for each energy of blendKeV.
+// blend stands for a material as a mixture of two neighbouring bases, in the
+// space of mean free paths, one pair for each energy of blendKeV.
 type blend struct {
-	pairs [][2]share
+	pairs [blendCount][2]share
 }
 
-// blendKeV are the energies where the pairs are found, even in the logarithm.
+// The energies where the pairs are found are even in the logarithm.
 const (
 	blendCount = 48
 	blendFirst = 10.0
@@ -31,38 +34,80 @@ var (
 	blendPerLn = (blendCount - 1) / math.Log(blendLast/blendFirst)
 )
 
-var blends sync.Map // *materials.Material to *blend
+// blends remembers by material and by composition, so that a material at
+// another density costs nothing new.
+var blends = struct {
+	sync.RWMutex
+	of          map[*materials.Material]*blend
+	composition map[string]*blend
+}{of: map[*materials.Material]*blend{}, composition: map[string]*blend{}}
+
+const mostBlends = 1000 // remembered before all are forgotten
 
 func blendOf(m *materials.Material) *blend {
-	if b, ok := blends.Load(m); ok {
-		return b.(*blend)
+	blends.RLock()
+	b := blends.of[m]
+	blends.RUnlock()
+	if b != nil {
+		return b
 	}
+	key := composition(m)
+	blends.Lock()
+	defer blends.Unlock()
+	b = blends.composition[key]
+	if b == nil {
+		b = newBlend(m, key)
+	}
+	if len(blends.of) >= mostBlends {
+		clear(blends.of)
+		clear(blends.composition)
+	}
+	blends.of[m], blends.composition[key] = b, b
+	return b
+}
+
+// composition names the elements and their shares to six digits.
+func composition(m *materials.Material) string {
+	var s strings.Builder
+	for _, f := range m.Fractions() {
+		fmt.Fprintf(&s, "%d:%.6f ", f.Z, f.Mass)
+	}
+	return s.String()
+}
+
+func newBlend(m *materials.Material, key string) *blend {
 	b := &blend{}
-	for i := range blendCount {
-		e := blendFirst * math.Exp(float64(i)/(blendCount-1)*math.Log(blendLast/blendFirst))
-		b.pairs = append(b.pairs, bracket(m, e))
+	for i := range b.pairs {
+		b.pairs[i] = bracket(m, math.Exp(blendLn+float64(i)/blendPerLn))
 	}
-	blends.Store(m, b)
+	for i := range table() {
+		if key == composition(table()[i].material) {
+			for j := range b.pairs {
+				b.pairs[j] = [2]share{{i, 1}, {i, 0}}
+			}
+		}
+	}
 	return b
 }
 
 // at gives the pair for an energy: the nearest of the blend.
-func (b *blend) at(lnKeV float64) [2]share {
+func (b *blend) at(lnKeV float64) *[2]share {
 	i := int((lnKeV-blendLn)*blendPerLn + 0.5)
-	return b.pairs[max(0, min(blendCount-1, i))]
+	return &b.pairs[max(0, min(blendCount-1, i))]
 }
 
-// absorbing is the ratio of photoelectric to incoherent, which tells how far
-// scattered photons get against unscattered ones; it rises with Z at an energy
-// that lies on one side of all K edges concerned.
+// absorbing is the logarithm of photoelectric over incoherent, which tells how
+// far scattered photons get against unscattered ones; it rises with Z at an
+// energy that lies on one side of all K edges concerned.
 func absorbing(m *materials.Material, keV float64) float64 {
 	return math.Log(m.MuRhoOf(materials.Photoelectric, keV) / m.MuRhoOf(materials.Incoherent, keV))
 }
 
 // comparedAt is the energy at which a material is compared with the bases for
-// photons of keV. Scattered photons lose energy until absorption takes over,
-// so it is not the energy of the incident photons, but one where the ratio of
-// photoelectric to incoherent still tells; edges are kept out of the way.
+// incident photons of keV. Scattered photons lose energy until absorption
+// takes over, so for hard photons it is not their own energy, but one where
+// the ratio of photoelectric to incoherent still tells; K edges are kept out
+// of the way.
 func comparedAt(m *materials.Material, keV float64) float64 {
 	var heavy float64
 	for _, f := range m.Fractions() {
@@ -71,19 +116,20 @@ func comparedAt(m *materials.Material, keV float64) float64 {
 		}
 	}
 	if heavy > 0.01 {
-		return math.Min(200, math.Max(120, keV))
+		return min(200, max(120, keV))
 	}
-	return math.Min(100, math.Max(30, keV))
+	return min(100, max(30, keV))
 }
 
 // bracket finds the two bases between whose ratios the material's ratio lies.
+// Outside all of them the nearest stands.
 func bracket(m *materials.Material, keV float64) [2]share {
 	e := comparedAt(m, keV)
 	own := absorbing(m, e)
 	lo, hi := -1, -1
 	var loR, hiR float64
-	for i, b := range table() {
-		r := absorbing(b.material, e)
+	for i := range cells.Blended {
+		r := absorbing(table()[i].material, e)
 		if r <= own && (lo < 0 || r > loR) {
 			lo, loR = i, r
 		}
@@ -94,7 +140,7 @@ func bracket(m *materials.Material, keV float64) [2]share {
 	switch {
 	case lo < 0:
 		return [2]share{{hi, 1}, {hi, 0}}
-	case hi < 0 || lo == hi || hiR == loR:
+	case hi < 0 || hiR == loR:
 		return [2]share{{lo, 1}, {lo, 0}}
 	}
 	w := (own - loR) / (hiR - loR)

@@ -28,52 +28,80 @@ type fold struct {
 }
 
 func newFold() *fold {
-	t := table()
-	f := &fold{sum: make([][]coefficients, len(t))}
-	return f
+	return &fold{sum: make([][]coefficients, len(table()))}
 }
 
-// add asks for photons of an energy, x mean free paths of material, n photons/cm2 incident.
+// add asks for photons of an energy, x mean free paths of material, n
+// photons/cm2 incident. Between the two nodes of energy and the two bases the
+// decay is interpolated like the tables that it belongs to: one exponential serves all four.
 func (f *fold) add(b *blend, keV, x, n float64) {
 	if !(n > 0) || x <= 0 {
 		return
 	}
 	ln := math.Log(keV)
-	var w [4]float64
-	k, m := planeWeights(x, &w)
-	for _, s := range b.at(ln) {
+	t := table()
+	var at [2]place
+	var decay, beyond float64
+	pair := b.at(ln)
+	for i, s := range pair {
 		if s.weight == 0 {
 			continue
 		}
-		t := &table()[s.base]
-		if f.sum[s.base] == nil {
-			f.sum[s.base] = make([]coefficients, len(t.nodes))
-		}
-		j := search(t.lnKeV, ln)
-		u := (ln - t.lnKeV[j]) / (t.lnKeV[j+1] - t.lnKeV[j])
-		u = max(0, min(1, u)) // below the first node its ratios stand, which are larger
-		f.sum[s.base][j].add(&t.nodes[j], keV, x, n*s.weight*(1-u), k, w[:m])
-		f.sum[s.base][j+1].add(&t.nodes[j+1], keV, x, n*s.weight*u, k, w[:m])
+		p := t[s.base].find(ln)
+		lo, hi := &t[s.base].nodes[p.node], &t[s.base].nodes[p.node+1]
+		decay += s.weight * (lo.decay + p.part*(hi.decay-lo.decay))
+		beyond += s.weight * (lo.beyond + p.part*(hi.beyond-lo.beyond))
+		at[i] = p
 	}
+	last := planes[planeCount-1]
+	ex := decay * min(x, last)
+	if x > last {
+		ex += beyond * (x - last)
+	}
+	if ex > spent {
+		return
+	}
+	a := n * math.Exp(-ex)
+	var w [4]float64
+	k, m := planeWeights(x, &w)
+	for i, s := range pair {
+		if s.weight == 0 {
+			continue
+		}
+		sum := f.sum[s.base]
+		if sum == nil {
+			sum = make([]coefficients, len(t[s.base].nodes))
+			f.sum[s.base] = sum
+		}
+		p, v := at[i], a*s.weight
+		nodes := t[s.base].nodes
+		sum[p.node].add(1/keV-nodes[p.node].inverse, v*(1-p.part), k, w[:m])
+		sum[p.node+1].add(1/keV-nodes[p.node+1].inverse, v*p.part, k, w[:m])
+	}
+}
+
+// place is where an energy lies between the nodes of a base.
+type place struct {
+	node int
+	part float64 // 0 to 1
+}
+
+// find gives the place of an energy; below the first node its ratios stand,
+// which are larger.
+func (b *base) find(ln float64) place {
+	j := search(b.lnKeV, ln)
+	u := (ln - b.lnKeV[j]) / (b.lnKeV[j+1] - b.lnKeV[j])
+	return place{j, max(0, min(1, u))}
 }
 
 // spent is the exponent past which a photon's share is dropped: 1e-26 of it at most.
 const spent = 60
 
-func (c *coefficients) add(node *node, keV, x, n float64, k int, w []float64) {
-	last := planes[planeCount-1]
-	ex := node.decay * min(x, last)
-	if x > last {
-		ex += node.beyond * (x - last)
-	}
-	if n == 0 || ex > spent {
-		return
-	}
-	a := n * math.Exp(-ex)
+func (c *coefficients) add(shift, a float64, k int, w []float64) {
 	for i, v := range w {
 		c.amount[k+i] += a * v
 	}
-	c.shift += a * (1/keV - node.inverse)
+	c.shift += a * shift
 	c.weight += a
 }
 

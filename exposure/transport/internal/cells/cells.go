@@ -17,9 +17,13 @@ const Version = 1
 // Seed is the root of every cell's seed.
 const Seed = 20261201
 
-// Bases are the names, in package materials, of the materials of the table in
-// rising effective atomic number.
-var Bases = []string{"polyethylene", "water", "Al", "concrete", "Ti", "Fe", "Cu", "Zr", "Sn", "W", "Pb", "U"}
+// Bases are the names, in package materials, of the materials of the table.
+// The first Blended, in rising effective atomic number, also serve to stand
+// for other materials; the rest serves itself only.
+var Bases = []string{"polyethylene", "water", "Al", "concrete", "Ti", "Fe", "Cu", "Zr", "Sn", "W", "Pb", "U", "heavy-concrete"}
+
+// Blended counts the bases that stand for other materials.
+const Blended = 12
 
 // PlanesMFP are the thicknesses in mean free paths of the incident photon.
 var PlanesMFP = []float64{0.05, 0.1, 0.25, 0.5, 1, 1.5, 2, 3, 4, 5, 6, 7, 8, 10, 12, 15, 20}

@@ -37,6 +37,7 @@ type cell struct {
 	coh, dcoh     float64 // and of coherent
 	pair, dpair   float64 // and of annihilation photons; the rest is fluorescence
 	shape, dshape float64 // of the coherent angle, see coherentShape
+	bound, dbound float64 // of the incoherent angle, see boundShape
 }
 
 // fluorescer is an element whose K lines lie above the cut.
@@ -59,16 +60,20 @@ const (
 )
 
 // node is a cell's end while the grid is built.
-type node struct{ mu, live, inc, coh, pair, shape float64 }
+type node struct{ mu, live, inc, coh, pair, shape, bound float64 }
 
 // NewMedium tabulates a material.
-func NewMedium(m *materials.Material) (*Medium, error) { return newMedium(m, true) }
+func NewMedium(m *materials.Material) (*Medium, error) { return newMedium(m, false, false) }
 
-// NewMediumWithoutCoherent tabulates a material as if coherent scattering did
-// not exist, which is how many published build-up factors count mean free paths.
-func NewMediumWithoutCoherent(m *materials.Material) (*Medium, error) { return newMedium(m, false) }
+// NewMediumOf tabulates a material with the simplifications of older
+// calculations, to compare with them: without coherent scattering, and with
+// electrons that are free, which scatter by the law of Klein and Nishina at
+// all angles.
+func NewMediumOf(m *materials.Material, withoutCoherent, freeElectrons bool) (*Medium, error) {
+	return newMedium(m, withoutCoherent, freeElectrons)
+}
 
-func newMedium(m *materials.Material, coherent bool) (*Medium, error) {
+func newMedium(m *materials.Material, withoutCoherent, freeElectrons bool) (*Medium, error) {
 	if m == nil {
 		return nil, fmt.Errorf("photon: no material given")
 	}
@@ -77,10 +82,10 @@ func newMedium(m *materials.Material, coherent bool) (*Medium, error) {
 	if med.lines, err = fluorescers(m); err != nil {
 		return nil, err
 	}
-	thomsonMass := thomsonPerGram(m)
+	thomsonMass, electrons := thomsonPerGram(m), electronsPerGram(m)
 	at := func(i int) node {
 		e := math.Float64frombits(firstBits + uint64(i)<<cellShift)
-		return med.node(m, e, thomsonMass, coherent)
+		return med.node(m, e, thomsonMass, electrons, withoutCoherent, freeElectrons)
 	}
 	a := at(0)
 	for i := range med.cells {
@@ -88,13 +93,14 @@ func newMedium(m *materials.Material, coherent bool) (*Medium, error) {
 		med.cells[i] = cell{
 			a.mu, b.mu - a.mu, a.live, b.live - a.live, a.inc, b.inc - a.inc,
 			a.coh, b.coh - a.coh, a.pair, b.pair - a.pair, a.shape, b.shape - a.shape,
+			a.bound, b.bound - a.bound,
 		}
 		a = b
 	}
 	return med, nil
 }
 
-func (med *Medium) node(m *materials.Material, e, thomsonMass float64, coherent bool) node {
+func (med *Medium) node(m *materials.Material, e, thomsonMass, electrons float64, withoutCoherent, freeElectrons bool) node {
 	inc, coh := m.MuRhoOf(materials.Incoherent, e), m.MuRhoOf(materials.Coherent, e)
 	pair := m.MuRhoOf(materials.PairNuclear, e) + m.MuRhoOf(materials.PairElectron, e)
 	var fluo float64
@@ -102,11 +108,19 @@ func (med *Medium) node(m *materials.Material, e, thomsonMass float64, coherent 
 		fluo += med.lines[i].perGram(e)
 	}
 	mu := m.MuRho(e)
-	if !coherent {
+	if withoutCoherent {
 		mu, coh = mu-coh, 0
 	}
+	var bound float64
+	if freeElectrons {
+		free := electrons * kleinNishinaTotal(e/electronKeV)
+		mu, inc = mu-inc+free, free
+	} else {
+		bound = boundShape(e, inc/electrons)
+	}
 	after := inc + coh + 2*pair + fluo
-	return node{mu, after / mu, inc / after, coh / after, 2 * pair / after, coherentShape(coh / thomsonMass)}
+	return node{mu, after / mu, inc / after, coh / after, 2 * pair / after,
+		coherentShape(coh / thomsonMass), bound}
 }
 
 // perGram is the element's production of K photons at an energy, cm2/g of the medium.
@@ -131,8 +145,10 @@ func fluorescers(m *materials.Material) ([]fluorescer, error) {
 		if err != nil {
 			return nil, err
 		}
-		above := photo.MuRhoOf(materials.Photoelectric, el.KEdgeKeV)
-		below := photo.MuRhoOf(materials.Photoelectric, el.KEdgeKeV*(1-1e-9))
+		// both a little off the edge: the element's edge and that of the cross
+		// sections come from different tables
+		above := photo.MuRhoOf(materials.Photoelectric, el.KEdgeKeV*1.001)
+		below := photo.MuRhoOf(materials.Photoelectric, el.KEdgeKeV*0.999)
 		f := fluorescer{edgeKeV: el.KEdgeKeV, mass: part.Mass, photo: photo}
 		var sum float64
 		for _, l := range el.KLines {
@@ -167,10 +183,23 @@ func thomsonPerGram(m *materials.Material) float64 {
 	return math.Pi * thomson * avogadro * z2
 }
 
-// coherentShape finds q in the coherent law (1+mu^2)/(1+q u)^2, u = (1-mu)/2,
+// electronsPerGram counts electrons, 1e24/g.
+func electronsPerGram(m *materials.Material) float64 {
+	var n float64
+	for _, p := range m.Fractions() {
+		el, err := materials.ElementByZ(p.Z)
+		if err != nil {
+			continue
+		}
+		n += p.Mass / el.AtomicWeight * float64(p.Z)
+	}
+	return avogadro * n
+}
+
+// coherentShape finds q in the coherent law (1+mu^2)/(1+q u), u = (1-mu)/2,
 // that gives the tabulated cross section: ratio is that cross section over pi
-// r^2 Z^2. The square of the form factor is so taken as 1/(1+(x/a)^2)^2 with
-// one length a for each energy, fixed by XCOM itself.
+// r^2 Z^2. The square of the form factor is so taken as Z^2/(1+(x/a)^2), with x
+// the momentum transfer and one length 1/a for each energy, fixed by XCOM.
 func coherentShape(ratio float64) float64 {
 	lo, hi := 0.0, 1.0
 	for coherentIntegral(hi) > ratio && hi < 1e9 {
@@ -187,18 +216,64 @@ func coherentShape(ratio float64) float64 {
 	return (lo + hi) / 2
 }
 
-// coherentIntegral is the integral of (1+mu^2)/(1+q u)^2 over mu from -1 to 1,
-// with v = 1+q u: (4/q) times the integral of (1-2u+2u^2)/v^2 over v.
+// coherentIntegral is the integral of (1+mu^2)/(1+q u) over mu from -1 to 1;
+// 1+mu^2 = 2(1-2u+2u^2) and dmu = 2 du.
 func coherentIntegral(q float64) float64 {
-	if q < 1e-3 {
-		return 8.0/3 - q*8/3 // first order
+	if q < 1e-2 {
+		return 8.0/3 - q*4/3 + q*q*14/15
 	}
-	v := 1 + q
-	l := math.Log(v)
-	a := 1 - 1/v                   // of 1/v^2
-	b := (l - a) / q               // of u/v^2
-	c := (q - 2*l + a) / (q * q)   // of u^2/v^2
-	return 4 / q * (a - 2*b + 2*c) // 1+mu^2 = 2(1-2u+2u^2), dmu = 2 du
+	l := math.Log1p(q)
+	return 4 / q * (l - 1 + 2*(l-1)/q + 2*l/(q*q))
+}
+
+// boundShape finds c in the incoherent scattering function v/(v+c), v =
+// ((1-mu)/2)^(3/4), that brings the law of Klein and Nishina down to the
+// tabulated cross section, 1e-24 cm2 per electron. The binding of the
+// electrons takes away small angles; how much of them is so fixed by XCOM.
+func boundShape(e, perElectron float64) float64 {
+	k := e / electronKeV
+	var v, law [boundNodes]float64
+	for i := range v {
+		r := (float64(i) + 0.5) / boundNodes // (1-mu)/2 = r^2, to see the small angles
+		v[i] = r * math.Sqrt(r)
+		law[i] = kleinNishina(k, 1-2*r*r) * 4 * r / boundNodes * 2 * math.Pi
+	}
+	sigma := func(c float64) float64 {
+		var sum float64
+		for i := range v {
+			sum += law[i] * v[i] / (v[i] + c)
+		}
+		return sum
+	}
+	if sigma(0) <= perElectron {
+		return 0
+	}
+	lo, hi := 0.0, 1e-6
+	for sigma(hi) > perElectron {
+		hi *= 4
+	}
+	for range 40 {
+		if mid := (lo + hi) / 2; sigma(mid) > perElectron {
+			lo = mid
+		} else {
+			hi = mid
+		}
+	}
+	return (lo + hi) / 2
+}
+
+const boundNodes = 100
+
+// kleinNishina is the cross section per steradian of a free electron, 1e-24 cm2.
+func kleinNishina(k, mu float64) float64 {
+	p := 1 / (1 + k*(1-mu))
+	return thomson / 2 * p * p * (p + 1/p - 1 + mu*mu)
+}
+
+// kleinNishinaTotal is its integral over all angles, 1e-24 cm2.
+func kleinNishinaTotal(k float64) float64 {
+	l := math.Log1p(2 * k)
+	return 2 * math.Pi * thomson * ((1+k)/(k*k)*(2*(1+k)/(1+2*k)-l/k) + l/(2*k) - (1+3*k)/((1+2*k)*(1+2*k)))
 }
 
 // at finds the cell of an energy and the place in it, 0 to 1.

@@ -41,9 +41,24 @@ func (r *random) turn(u, c float64) float64 {
 	return max(-1, min(1, v))
 }
 
-// compton draws energy and cosine after scattering from a free electron at
-// rest: the law of Klein and Nishina by Kahn's rejection.
-func (r *random) compton(e float64) (after, c float64) {
+// compton draws energy and cosine after scattering from an electron at rest
+// whose binding takes away small angles by v/(v+bound), see boundShape.
+func (r *random) compton(e, bound float64) (after, c float64) {
+	for {
+		after, c = r.kleinNishina(e)
+		if bound == 0 {
+			return after, c
+		}
+		v := math.Sqrt(max(0, (1-c)/2))
+		v *= math.Sqrt(v)
+		if r.unit()*(v+bound) <= v {
+			return after, c
+		}
+	}
+}
+
+// kleinNishina draws from the law of Klein and Nishina by Kahn's rejection.
+func (r *random) kleinNishina(e float64) (after, c float64) {
 	a := e / electronKeV
 	b := 1 + 2*a
 	for {
@@ -66,8 +81,7 @@ func (r *random) compton(e float64) (after, c float64) {
 // coherent draws the cosine of a coherent deflection of shape q.
 func (r *random) coherent(q float64) float64 {
 	for {
-		x := r.unit()
-		u := x / (1 + q*(1-x))
+		u := math.Expm1(r.unit()*math.Log1p(q)) / q
 		c := 1 - 2*u
 		if 2*r.unit() <= 1+c*c {
 			return c
@@ -109,7 +123,7 @@ func (med *Medium) emitter(r *random, e float64) *fluorescer {
 func (med *Medium) collide(r *random, c *cell, t, e, u float64) (after, cos float64) {
 	x := r.unit() - (c.inc + t*c.dinc)
 	if x < 0 {
-		after, d := r.compton(e)
+		after, d := r.compton(e, c.bound+t*c.dbound)
 		return after, r.turn(u, d)
 	}
 	if x -= c.coh + t*c.dcoh; x < 0 {
@@ -119,7 +133,7 @@ func (med *Medium) collide(r *random, c *cell, t, e, u float64) (after, cos floa
 		if c.pair+t*c.dpair > 0 {
 			return electronKeV, 2*r.unit() - 1
 		}
-		after, d := r.compton(e) // rounding of the shares only
+		after, d := r.compton(e, c.bound+t*c.dbound) // rounding of the shares only
 		return after, r.turn(u, d)
 	}
 	return med.fluorescent(r, e), 2*r.unit() - 1

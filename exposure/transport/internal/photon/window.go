@@ -73,7 +73,7 @@ func (g *geometry) pilot(seed uint64) {
 		w.inverse[b] = math.Exp(slope*x) * w.wanted(x)
 	}
 	w.crest()
-	for i := range 2 {
+	for i := range 3 {
 		p := newWalker(g, seed, pilotStream+uint64(i))
 		p.run(pilotStarts)
 		w.set(p.seen)
@@ -98,7 +98,7 @@ func (g *geometry) softest() float64 {
 }
 
 const (
-	pilotStarts = 400
+	pilotStarts = 1000
 	pilotStream = 1 << 32
 )
 
@@ -108,29 +108,18 @@ func (w *window) wanted(x float64) float64 {
 	return 1/((x+early)*math.Log1p(all/early)) + 2*x/(all*all)
 }
 
-// set gives each depth its share of the collisions.
-// seen is the weight of collisions per source photon by bin.
+// set gives each depth its share of the collisions. seen is the weight of
+// collisions per source photon by bin; where the pilot hardly saw a bin, it is
+// taken to fall a little faster than the source's own beam.
 func (w *window) set(seen []float64) {
-	last := 0.0
-	var density [windowBins]float64
-	var sum float64
+	fall := math.Exp(-1.2 * (w.center[1] - w.center[0]))
+	var sum, last float64
 	for b := range seen {
-		v := seen[b]
-		if b > 0 && v < last*0.3 {
-			v = last * 0.3 // a bin that the pilot hardly saw
-		}
-		last = v
-		density[b] = w.wanted(w.center[b])
-		sum += density[b]
+		sum += w.wanted(w.center[b])
 	}
-	last = 0
 	for b := range seen {
-		v := seen[b]
-		if b > 0 {
-			v = max(v, last*0.3)
-		}
-		last = v
-		w.inverse[b] = perHistory * density[b] / sum / v
+		last = max(seen[b], last*fall)
+		w.inverse[b] = perHistory * w.wanted(w.center[b]) / sum / last
 	}
 	w.crest()
 }
