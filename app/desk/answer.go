@@ -13,6 +13,9 @@ type Answer struct {
 	Working     []working.Step
 	Unsharpness float64 // geometric, mm; 0 not computed
 	ActivityGBq float64 // sealed source, decayed to the plan's time; 0 with a tube
+	SNR         []Signal
+	Spread      []Share // of the time, largest first
+	Engine      string  // version of the physics
 }
 
 // Exposure is the time for the wanted density and its spread.
@@ -32,6 +35,19 @@ type Beam struct {
 type Spot struct {
 	At                   string
 	ThicknessMM, Density float64
+}
+
+// Signal is one place of the part on a plate or a panel.
+type Signal struct {
+	At                string
+	ThicknessMM, SNRn float64
+}
+
+// Share is what one input adds to the spread of the time, as one standard
+// deviation relative to the time.
+type Share struct {
+	Name     string
+	Relative float64
 }
 
 // Verdicts of a check.

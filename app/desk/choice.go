@@ -1,7 +1,9 @@
 package desk
 
 import (
+	"cmp"
 	"fmt"
+	"slices"
 
 	"halfvalue/exposure/plan"
 	"halfvalue/materials"
@@ -103,8 +105,22 @@ func partChoices(p plan.Plan) []Choice {
 	return out
 }
 
+// families is the order in which materials are offered: what is radiographed
+// most stands first.
+func families() []string {
+	return []string{"steel", "cast-iron", "aluminium", "nickel", "copper", "titanium", "magnesium", "zirconium", "heavy", "plastic", "concrete", "mineral", "liquid", "gas"}
+}
+
 func materialOptions() []Option {
 	all := materials.Catalogue()
+	order := families()
+	rank := func(m *materials.Material) int {
+		if i := slices.Index(order, m.Family()); i >= 0 {
+			return i
+		}
+		return len(order)
+	}
+	slices.SortStableFunc(all, func(a, b *materials.Material) int { return cmp.Compare(rank(a), rank(b)) })
 	out := make([]Option, len(all))
 	for i, m := range all {
 		out[i] = Option{Value: m.Name(), Title: m.Title(), Note: m.Family()}
@@ -151,7 +167,7 @@ func screenOptions() []Option {
 }
 
 func screensName(s *[2]float64) string {
-	if s == nil {
+	if s == nil || *s == [2]float64{} {
 		return "none"
 	}
 	return fmt.Sprintf("%g+%g", s[0], s[1])

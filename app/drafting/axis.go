@@ -90,6 +90,7 @@ type Scale struct {
 	Size   float64 // of text
 	Count  int     // about how many ticks
 	Format func(float64) string
+	Marks  []float64 // instead of figures on 1-2-5: hours and minutes have others
 }
 
 // Horizontal draws the axis below a plot, figures under the ticks, the title
@@ -97,7 +98,7 @@ type Scale struct {
 func (d *Drawing) Horizontal(s Scale) {
 	d.Line(Pt{s.From, s.Across}, Pt{s.To, s.Across}, Thin, Line)
 	last := math.Inf(-1)
-	for _, v := range s.Ticks(s.Count) {
+	for _, v := range s.marks() {
 		x := s.At(v)
 		if s.Reach != s.Across {
 			d.Line(Pt{x, s.Across}, Pt{x, s.Reach}, Hair, Ghost)
@@ -122,7 +123,7 @@ func (d *Drawing) Horizontal(s Scale) {
 func (d *Drawing) Vertical(s Scale) {
 	d.Line(Pt{s.Across, s.From}, Pt{s.Across, s.To}, Thin, Line)
 	last := math.Inf(1)
-	for _, v := range s.Ticks(s.Count) {
+	for _, v := range s.marks() {
 		y := s.At(v)
 		if s.Reach != s.Across {
 			d.Line(Pt{s.Across, y}, Pt{s.Reach, y}, Hair, Ghost)
@@ -137,6 +138,19 @@ func (d *Drawing) Vertical(s Scale) {
 	if s.Title != "" {
 		d.Text(Pt{s.Across, s.To - 0.7*s.Size}, s.Title, Style{Size: s.Size, Ink: Faint})
 	}
+}
+
+func (s Scale) marks() []float64 {
+	if s.Marks == nil {
+		return s.Ticks(s.Count)
+	}
+	var out []float64
+	for _, v := range s.Marks {
+		if v >= s.Lo && v <= s.Hi {
+			out = append(out, v)
+		}
+	}
+	return out
 }
 
 func (s Scale) figure(v float64) string {

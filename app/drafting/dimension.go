@@ -8,12 +8,13 @@ import "math"
 // distance is too small the arrows stand outside, and the text beyond B or,
 // at an upright line, level to the right of it.
 type Dimension struct {
-	A, B Pt
-	Off  float64 // distance of the line from A-B, positive to the left of A to B as drawn on paper with y up, that is: a B to the right of A puts the line above for a positive Off
-	Text string
-	Size float64
-	Bold bool
-	Ink  Ink
+	A, B  Pt
+	Off   float64 // distance of the line from A-B, positive to the left of A to B as drawn on paper with y up, that is: a B to the right of A puts the line above for a positive Off
+	Text  string
+	Brief string // stands instead where Text is too long for the line
+	Size  float64
+	Bold  bool
+	Ink   Ink
 	// Break cuts the line with a zigzag: the distance is not drawn whole.
 	Break bool
 }
@@ -92,9 +93,15 @@ func (d *Drawing) dimensionText(a, b, u Pt, m Dimension) Rect {
 		dir = dir.Mul(-1)
 	}
 	up := Pt{dir.Y, -dir.X}
+	room := b.Sub(a).Len() - 2*arrowLong
 	w := d.Fonts.Width(m.Text, m.Size, m.Bold)
+	if w > room && m.Brief != "" {
+		if short := d.Fonts.Width(m.Brief, m.Size, m.Bold); short <= room {
+			m.Text, w = m.Brief, short
+		}
+	}
 	mid := a.Add(b).Mul(0.5)
-	if room := b.Sub(a).Len() - 2*arrowLong; w > room {
+	if w > room {
 		if math.Abs(u.X) < 1e-6 {
 			return d.Text(Pt{mid.X + 8, mid.Y + CapHeight*m.Size/2}, m.Text, Style{Size: m.Size, Bold: m.Bold, Ink: Line, Knock: true})
 		}

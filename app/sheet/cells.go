@@ -9,16 +9,22 @@ import (
 )
 
 // shotCells are the cells of the Shot sheet's title block, the answer first.
-func (u *UI) shotCells() []cell {
+func (u *UI) shotCells(stamps bool) []cell {
 	out := []cell{u.timeCell(), u.ropeCell()}
+	if stamps {
+		for i := range u.s.Answer.Checks {
+			out = append(out, cell{check: &u.s.Answer.Checks[i], span: 2})
+		}
+	}
 	out = append(out, u.chargeCell())
 	out = append(out, u.dialCell("detector.film.density", "detector.plate.snrN", "detector.panel.snrN")...)
 	out = append(out, u.sourceCells()...)
 	out = append(out, u.densityCells()...)
-	out = append(out, u.detectorCells()...)
+	out = append(out, u.choiceCell(1, "detector.film.class", "detector.film.screensMM")...)
 	out = append(out, u.setupCells()...)
 	out = append(out, u.siteCells()...)
-	return append(out, u.beamCells()...)
+	out = append(out, u.beamCells()...)
+	return append(out, u.choiceCell(1, "source", "source.tube.target", "source.tube.waveform", "source.sealed.basis")...)
 }
 
 func (u *UI) timeCell() cell {
@@ -111,7 +117,7 @@ func (u *UI) dialCell(fields ...string) []cell {
 		if !ok {
 			continue
 		}
-		caption := q.Name
+		caption := capital(q.Name)
 		if q.Symbol != "" && len(q.Symbol) <= 4 && q.Symbol != q.Name {
 			caption = q.Symbol + " " + q.Name
 		}
@@ -129,7 +135,7 @@ func (u *UI) choiceCell(span int, fields ...string) []cell {
 		if !ok {
 			continue
 		}
-		out = append(out, cell{caption: c.Name, value: c.Title(), span: span, panel: desk.Panel{Kind: desk.ChoicePanel, Field: f}, label: "Choose " + c.Name + ", " + c.Title()})
+		out = append(out, cell{caption: capital(c.Name), value: c.Title(), span: span, panel: desk.Panel{Kind: desk.ChoicePanel, Field: f}, label: "Choose " + c.Name + ", " + c.Title()})
 	}
 	return out
 }
@@ -144,7 +150,7 @@ func (u *UI) sourceCells() []cell {
 		for i := range s.Collimator {
 			out = append(out, u.dialCell(fmt.Sprintf("source.sealed.collimator[%d].mm", i))...)
 		}
-		return append(out, u.choiceCell(2, "source")...)
+		return out
 	}
 	out := u.dialCell("source.tube.kv", "source.tube.ma", "source.tube.focusMM")
 	if t := u.s.Filled.Source.Tube; t != nil {
@@ -152,8 +158,7 @@ func (u *UI) sourceCells() []cell {
 			out = append(out, u.dialCell(fmt.Sprintf("source.tube.filters[%d].mm", i))...)
 		}
 	}
-	out = append(out, u.choiceCell(1, "source.tube.target", "source.tube.waveform")...)
-	return append(out, u.choiceCell(2, "source")...)
+	return out
 }
 
 func bothActivity(gbq float64) string {
@@ -170,10 +175,6 @@ func (u *UI) densityCells() []cell {
 		lines = append(lines, fmt.Sprintf("%s, %s: %s", d.At, u.s.Units.Format(desk.Length, d.ThicknessMM, 3), desk.Significant(d.Density, 3)))
 	}
 	return []cell{{caption: "Density at each section", value: strings.Join(lines, "\n"), span: 2}}
-}
-
-func (u *UI) detectorCells() []cell {
-	return u.choiceCell(1, "detector.film.class", "detector.film.screensMM")
 }
 
 func (u *UI) setupCells() []cell {
@@ -215,4 +216,12 @@ func (u *UI) beamCells() []cell {
 		note += ", " + u.s.Plan.At.Format("2006-01-02 15:04") + " UTC"
 	}
 	return append(out, cell{caption: "Title", value: title, note: note, span: 2})
+}
+
+// capital writes a caption with a capital.
+func capital(s string) string {
+	if s == "" {
+		return s
+	}
+	return strings.ToUpper(s[:1]) + s[1:]
 }

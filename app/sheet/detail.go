@@ -25,37 +25,87 @@ type band struct {
 	shortened   bool // drawn thinner or thicker than to scale
 }
 
+// sectionBox is where the stack and its words may stand in a view.
+func (u *UI) sectionBox(r drafting.Rect) drafting.Rect {
+	small := u.look.Small()
+	return drafting.Rect{X0: r.X0 + 20, Y0: r.Y0 + small*2.2 + 24, X1: r.X1 - touch.Unit, Y1: r.Y1 - small*3 - touch.Unit}
+}
+
+// stackWidth is the width of the stack in a box; its words stand at the right.
+func stackWidth(box drafting.Rect) float64 { return math.Min(box.W()*0.42, 150) }
+
+// sectionFits says whether the words beside the stack have room in a view of
+// a height and a width.
+func (u *UI) sectionFits(height, width float64) bool {
+	box := u.sectionBox(drafting.Rect{X1: width, Y1: height})
+	bands, _ := u.bands(box.H())
+	need := 0.0
+	for _, d := range bands {
+		need += u.bandWords(box.W()-stackWidth(box)-26, d)
+	}
+	return len(bands) > 0 && need <= box.H()+u.look.Small()
+}
+
+// bandWords is the height of what is written beside a band.
+func (u *UI) bandWords(width float64, d band) float64 {
+	if d.value == "" {
+		return 0
+	}
+	b := &u.bench
+	return b.Height(width, d.value, drafting.Style{Size: u.look.Small(), Bold: true}) + b.Height(width, d.name, u.look.Caption()) + 4
+}
+
 // detailView draws the stack from the part's source side to the film enlarged:
 // layers hatched by family, the IQI in its place, screens and film.
 func (u *UI) detailView(r drafting.Rect) {
 	b := &u.bench
 	b.Line(drafting.Pt{X: r.X0, Y: r.Y0 + touch.Unit}, drafting.Pt{X: r.X0, Y: r.Y1 - touch.Unit}, drafting.Hair, drafting.Ghost)
-	small := u.look.Small()
-	in := drafting.Rect{X0: r.X0 + 20, Y0: r.Y0 + small*2.2 + 24, X1: r.X1 - touch.Unit, Y1: r.Y1 - small*2 - touch.Unit}
+	in := u.sectionBox(r)
 	bands, scale := u.bands(in.H())
-	if len(bands) == 0 || in.H() < 60 {
-		return
-	}
 	total := 0.0
 	for _, d := range bands {
 		total += d.height
 	}
 	y := in.Y0 + math.Max(0, (in.H()-total)/2)
-	width := math.Min(in.W()*0.42, 150)
-	stack := drafting.Rect{X0: in.X0, X1: in.X0 + width, Y0: y, Y1: y + total}
+	stack := drafting.Rect{X0: in.X0, X1: in.X0 + stackWidth(in), Y0: y, Y1: y + total}
 	b.Fill(drafting.Box(drafting.Rect{X0: stack.X0, Y0: stack.Y0 - 22, X1: stack.X1, Y1: stack.Y1}), drafting.BeamWash)
-	u.iqi(stack, bands, small)
-	for _, d := range bands {
-		u.band(drafting.Rect{X0: stack.X0, Y0: y, X1: stack.X1, Y1: y + d.height}, in.X1, d, small)
+	u.iqi(stack, bands, u.look.Small())
+	tops := u.wordTops(stack, in, bands)
+	for i, d := range bands {
+		u.band(drafting.Rect{X0: stack.X0, Y0: y, X1: stack.X1, Y1: y + d.height}, drafting.Rect{X0: stack.X1 + 26, Y0: tops[i], X1: in.X1, Y1: in.Y1}, d)
 		y += d.height
 	}
-	text := "Section A " + ratio(scale)
+	text := "Section A"
 	for _, d := range bands {
 		if d.shortened {
-			text = "Section A, not to scale"
+			text, scale = "Section A, not to scale", 0
 		}
 	}
-	u.title(r, text)
+	u.title(r, text, scale)
+}
+
+// wordTops places the words of the bands beside their middles, none over
+// another.
+func (u *UI) wordTops(stack, in drafting.Rect, bands []band) []float64 {
+	tops := make([]float64, len(bands))
+	width := in.X1 - stack.X1 - 26
+	y, free := stack.Y0, in.Y0-u.look.Small()
+	for i, d := range bands {
+		h := u.bandWords(width, d)
+		tops[i] = math.Max(free, y+(d.height-h)/2)
+		if h > 0 {
+			free = tops[i] + h
+		}
+		y += d.height
+	}
+	foot := in.Y1 + u.look.Small()
+	for i := len(bands) - 1; i >= 0; i-- {
+		if h := u.bandWords(width, bands[i]); h > 0 {
+			tops[i] = math.Min(tops[i], foot-h)
+			foot = tops[i]
+		}
+	}
+	return tops
 }
 
 // bands builds the stack for a height and says at which scale.
@@ -172,16 +222,24 @@ func (u *UI) cassette(name, value string, screens *[2]float64, prefix string) []
 		choice = "detector.film.class"
 	}
 	film := band{name: name, value: value, height: -math.Max(u.look.Target, u.look.Small()*3.4), film: true, field: fields[prefix], choice: choice}
-	if screens == nil {
+	if screens == nil || *screens == [2]float64{} {
 		return []band{film}
 	}
 	front := band{height: -7, solid: true}
 	film.name += fmt.Sprintf(", Pb %g + %g", screens[0], screens[1])
-	return []band{front, film, front}
+	out := []band{}
+	if screens[0] > 0 {
+		out = append(out, front)
+	}
+	out = append(out, film)
+	if screens[1] > 0 {
+		out = append(out, front)
+	}
+	return out
 }
 
-// band draws one piece of the stack, its name at the right, and its targets.
-func (u *UI) band(r drafting.Rect, right float64, d band, small float64) {
+// band draws one piece of the stack, its words at the right, and its targets.
+func (u *UI) band(r, words drafting.Rect, d band) {
 	b := &u.bench
 	switch {
 	case d.solid:
@@ -199,35 +257,35 @@ func (u *UI) band(r drafting.Rect, right float64, d band, small float64) {
 	default:
 		b.Fill(drafting.Box(r), drafting.Sheet)
 		b.Hatch(drafting.Box(r), d.family, drafting.Line)
+		u.bandDimension(r)
 	}
 	b.Line(drafting.Pt{X: r.X0, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Medium, drafting.Line)
 	b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Medium, drafting.Line)
-	u.bandText(r, right, d, small)
+	u.bandText(r, words, d)
 }
 
-// bandText writes value and name right of the stack; both can be touched.
-func (u *UI) bandText(r drafting.Rect, right float64, d band, small float64) {
+func (u *UI) bandDimension(r drafting.Rect) {
 	b := &u.bench
-	if !d.gap && !d.film {
-		x := r.X1 + 14
-		b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: r.Y0}, B: drafting.Pt{X: x, Y: r.Y1}, Size: small, Ink: drafting.Line})
-		b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y0}, drafting.Pt{X: x + 4, Y: r.Y0}, drafting.Hair, drafting.Faint)
-		b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y1}, drafting.Pt{X: x + 4, Y: r.Y1}, drafting.Hair, drafting.Faint)
-	}
-	words := drafting.Rect{X0: r.X1 + 26, X1: right}
-	bold := drafting.Style{Size: small, Bold: true, Ink: drafting.Line}
-	plain := u.look.Caption()
-	lines := b.Height(words.W(), d.value, bold) + b.Height(words.W(), d.name, plain)
-	top := r.Mid().Y - lines/2
-	h := b.Paragraph(drafting.Rect{X0: words.X0, Y0: top, X1: words.X1, Y1: r.Y1}, d.value, bold)
-	b.Paragraph(drafting.Rect{X0: words.X0, Y0: top + h, X1: words.X1, Y1: r.Y1}, d.name, plain)
+	x := r.X1 + 14
+	b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: r.Y0}, B: drafting.Pt{X: x, Y: r.Y1}, Size: u.look.Small(), Ink: drafting.Line})
+	b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y0}, drafting.Pt{X: x + 4, Y: r.Y0}, drafting.Hair, drafting.Faint)
+	b.Line(drafting.Pt{X: r.X1 + 2, Y: r.Y1}, drafting.Pt{X: x + 4, Y: r.Y1}, drafting.Hair, drafting.Faint)
+}
+
+// bandText writes value and name right of the stack; the stack and the words
+// can both be touched.
+func (u *UI) bandText(r, words drafting.Rect, d band) {
+	b := &u.bench
+	h := b.Paragraph(words, d.value, drafting.Style{Size: u.look.Small(), Bold: true, Ink: drafting.Line})
+	b.Paragraph(drafting.Rect{X0: words.X0, Y0: words.Y0 + h, X1: words.X1, Y1: words.Y1}, d.name, u.look.Caption())
 	half := u.look.Target / 2
 	if d.field != "" {
-		u.open(drafting.Rect{X0: r.X0, Y0: math.Min(r.Y0, r.Mid().Y-half), X1: r.X1 + 24, Y1: math.Max(r.Y1, r.Mid().Y+half)}, d.field, "")
+		u.open(drafting.Rect{X0: r.X0, Y0: math.Min(r.Y0, r.Mid().Y-half), X1: r.X1 + 22, Y1: math.Max(r.Y1, r.Mid().Y+half)}, d.field, "")
 	}
 	if d.choice != "" {
-		box := drafting.Rect{X0: words.X0, Y0: math.Min(top, r.Mid().Y-half), X1: right, Y1: math.Max(top+lines, r.Mid().Y+half)}
-		u.openAs(box, "Choose "+d.name, desk.Panel{Kind: desk.ChoicePanel, Field: d.choice})
+		words.X0 -= 4
+		words.Y1 = words.Y0 + u.bandWords(words.W()-4, d)
+		u.openAs(words, "Choose "+d.name, desk.Panel{Kind: desk.ChoicePanel, Field: d.choice})
 	}
 }
 
@@ -238,7 +296,7 @@ func (u *UI) iqi(stack drafting.Rect, bands []band, small float64) {
 	p := u.s.Filled
 	text, y := "IQI, source side", stack.Y0
 	if p.Setup.Kind == plan.DoubleWallSingleImage || p.Setup.Kind == plan.Panoramic {
-		text = "IQI, film side"
+		text = "IQI, film side, F"
 		for _, d := range bands {
 			if d.film || d.solid {
 				break
@@ -251,9 +309,9 @@ func (u *UI) iqi(stack drafting.Rect, bands []band, small float64) {
 		b.Fill(drafting.Circle(drafting.Pt{X: x, Y: y - r}, r), drafting.Line)
 		x += 11
 	}
-	if y == stack.Y0 {
-		b.Text(drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}, text, drafting.Style{Size: small, Ink: drafting.Faint})
-		return
+	at := drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}
+	if y != stack.Y0 {
+		at.Y = stack.Y1 + small*1.3
 	}
-	b.Text(drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}, text+" F", drafting.Style{Size: small, Ink: drafting.Faint})
+	b.Text(at, text, drafting.Style{Size: small, Ink: drafting.Faint})
 }

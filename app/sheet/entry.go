@@ -85,7 +85,7 @@ func (u *UI) entryPieces(e desk.Entry) []piece {
 		out = append(out, piece{strings.Join(figures, "\n"), plain, touch.Unit})
 	}
 	if e.Engine != "" {
-		out = append(out, piece{"Reckoned by " + e.Engine, small, 0})
+		out = append(out, piece{"Reckoned by engine " + e.Engine, small, 0})
 	}
 	out = append(out, piece{"Hash " + spaced(e.Hash), small, touch.Unit})
 	if a := u.s.Book.Again; a != nil && a.Number == e.Number {

@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"math"
+	"strings"
 
 	"halfvalue/app/desk"
 	"halfvalue/app/drafting"
@@ -14,7 +15,7 @@ func (u *UI) panelHeight(width float64) float64 {
 	switch u.s.Panel.Kind {
 	case desk.DialPanel:
 		h := u.dial.Height(&u.bench)
-		if !u.besides(width) {
+		if !u.besides(width) && !u.dial.Keypad {
 			h += u.stripHeight() + touch.Unit
 		}
 		return h + pad
@@ -41,7 +42,6 @@ func (u *UI) panelIn(r drafting.Rect) {
 	shut, rest := in.CutRight(u.look.Target)
 	shut.Y1 = shut.Y0 + u.look.Target
 	b.Button(touch.Button{Box: shut, Label: "Close", Symbol: b.Cross, Do: u.do(desk.Close{})})
-	_, rest = rest, drafting.Rect{X0: rest.X0, Y0: rest.Y0, X1: rest.X1 - touch.Unit, Y1: rest.Y1}
 	rest.X1 = shut.X0 - touch.Unit
 	switch u.s.Panel.Kind {
 	case desk.DialPanel:
@@ -64,17 +64,20 @@ func (u *UI) dialPanel(rest, in drafting.Rect) {
 	if !ok {
 		return
 	}
-	strip, dial := drafting.Rect{}, rest
+	notch := in.X1 - rest.X1
 	if u.besides(in.W() + 2*touch.Unit) {
-		strip, dial = rest.CutLeft(math.Min(rest.W()*0.48, 460))
+		strip, dial := in.CutLeft(math.Min(in.W()*0.45, 460))
 		_, dial = dial.CutLeft(2 * touch.Unit)
-	} else {
-		dial, strip = rest.CutTop(u.dial.Height(&u.bench))
-		_, strip = strip.CutTop(touch.Unit)
-		strip.X1 = in.X1
+		u.dial.Layout(&u.bench, dial, notch, u.dialSpec(q))
+		u.tradeOff(strip, q)
+		return
 	}
-	u.dial.Layout(&u.bench, dial, u.dialSpec(q))
-	u.tradeOff(strip, q)
+	dial, strip := in.CutTop(u.dial.Height(&u.bench))
+	u.dial.Layout(&u.bench, dial, notch, u.dialSpec(q))
+	if !u.dial.Keypad {
+		_, strip = strip.CutTop(touch.Unit)
+		u.tradeOff(strip, q)
+	}
 }
 
 func (u *UI) dialSpec(q desk.Quantity) touch.DialSpec {
@@ -114,6 +117,7 @@ func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
 	u.strip.Layout(&u.bench, r, touch.StripSpec{
 		Field: q.Field, Label: q.Label(), Points: points, Lo: c.From, Hi: c.To, Log: q.Log,
 		Now:     touch.StripPoint{X: q.Value, Y: u.s.Answer.Exposure.Seconds},
+		XTitle:  strings.TrimSuffix(q.Symbol+", "+unitName(units, q.Kind), ", "),
 		XFigure: func(v float64) string { f, _ := units.In(q.Kind, v); return desk.Significant(f, 3) },
 		YFigure: shortClock,
 		Read: func(p touch.StripPoint) string {
@@ -126,10 +130,21 @@ func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
 	})
 }
 
+func unitName(u desk.Units, k desk.Kind) string {
+	_, name := u.In(k, 1)
+	return name
+}
+
 // shortClock writes a time on an axis.
 func shortClock(s float64) string {
-	if s >= 120 {
+	switch {
+	case s >= 7200:
+		return desk.Significant(s/3600, 2) + " h"
+	case s >= 60:
 		return desk.Significant(s/60, 2) + " min"
 	}
 	return desk.Significant(s, 2) + " s"
 }
+
+// SetKeypad puts the dial's keypad out or away, as its button does.
+func (u *UI) SetKeypad(out bool) { u.dial.Keypad = out }

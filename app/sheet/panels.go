@@ -82,7 +82,7 @@ func (u *UI) choicePanel(r drafting.Rect) {
 		_, r = rest.CutTop(touch.Unit)
 		options = narrow(options, u.search.Text())
 	} else {
-		r = u.heading(r, strings.ToUpper(c.Name[:1])+c.Name[1:])
+		r = u.heading(r, capital(c.Name))
 	}
 	u.optionGrid(r, c, options)
 }

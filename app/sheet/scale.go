@@ -25,7 +25,7 @@ type sight struct {
 }
 
 // leastPart is how thick the part stands at least before a distance is broken.
-const leastPart = 16.0
+const leastPart = 7.0
 
 // newSight fits the setup of a normalised plan into a view.
 func newSight(p plan.Plan, view drafting.Rect) sight {
@@ -85,18 +85,4 @@ func (g sight) depthAt(y float64, p plan.Plan) float64 {
 		return p.Setup.SFDMM - (g.film-y)/g.scale
 	}
 	return (y - g.source) / g.scale
-}
-
-// ratio is the scale in words: "1:5", "2:1".
-func ratio(dpPerMM float64) string {
-	r := dpPerMM / drafting.DpPerMM
-	if r >= 1 {
-		return drafting.Plain(roundTo(r, 2)) + ":1"
-	}
-	return "1:" + drafting.Plain(roundTo(1/r, 2))
-}
-
-func roundTo(v float64, digits int) float64 {
-	p := math.Pow(10, float64(digits)-1-math.Floor(math.Log10(v)))
-	return math.Round(v*p) / p
 }

@@ -27,7 +27,7 @@ func (u *UI) shotWide(in drafting.Rect) {
 	share := 0.30 + 0.14*(u.look.Text-1)
 	block, view := in.CutRight(math.Max(300, in.W()*share))
 	b.Line(drafting.Pt{X: block.X0, Y: block.Y0}, drafting.Pt{X: block.X0, Y: block.Y1}, drafting.Bold, drafting.Line)
-	u.titleBlock(block)
+	u.titleBlock(block, false)
 	if u.s.Panel.Kind != desk.NoPanel {
 		view = u.panelBelow(view, 0.86)
 	} else {
@@ -53,9 +53,12 @@ func (u *UI) shotTall(in drafting.Rect) {
 	}
 	view, rest := in.CutTop(in.H() * 0.5)
 	b.Line(drafting.Pt{X: rest.X0, Y: rest.Y0}, drafting.Pt{X: rest.X1, Y: rest.Y0}, drafting.Bold, drafting.Line)
-	view = u.stamps(view)
+	narrow := in.W() < 560*u.look.Text
+	if !narrow {
+		view = u.stamps(view)
+	}
 	u.drawing(view)
-	u.titleBlock(rest)
+	u.titleBlock(rest, narrow)
 }
 
 // panelBelow draws the open panel at the foot of a view and returns what is
@@ -129,15 +132,19 @@ func (u *UI) checkText(c desk.Check) string {
 	return t
 }
 
-// drawing draws side view and detail next to each other, the detail only
+// drawing draws side view and section next to each other, the section only
 // where there is room for both.
 func (u *UI) drawing(view drafting.Rect) {
-	side, detail := view, drafting.Rect{}
-	if view.W() >= 340*math.Min(u.look.Text, 1.5) {
-		detail, side = view.CutRight(math.Min(view.W()*0.46, 400*u.look.Text))
+	side, section := view, drafting.Rect{}
+	width := math.Min(view.W()*0.46, 400*u.look.Text)
+	left, right := u.sideMargins()
+	if view.W()-width >= left+right+64 && u.sectionFits(view.H(), width) {
+		section, side = view.CutRight(width)
 	}
+	u.room = side
 	u.sideView(side)
-	if !detail.Empty() {
-		u.detailView(detail)
+	if !section.Empty() {
+		u.room = section
+		u.detailView(section)
 	}
 }

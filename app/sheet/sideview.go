@@ -13,16 +13,16 @@ import (
 // sideView draws source, beam, part and film to scale with their dimensions.
 // What is touched opens its dial.
 func (u *UI) sideView(r drafting.Rect) {
+	b := &u.bench
 	small := u.look.Small()
 	p := u.s.Filled
-	left, right := small*2+26, small*5.2
+	left, right := u.sideMargins()
 	head, foot := 62.0, small*2+22
 	view := drafting.Rect{X0: r.X0 + left, Y0: r.Y0 + head + small*1.3, X1: r.X1 - right, Y1: r.Y1 - foot}
 	if view.W() < 40 || view.H() < 60 {
 		return
 	}
 	g := newSight(p, view)
-	b := &u.bench
 	b.Clip(drafting.Box(r))
 	u.beam(g, p)
 	u.sidePart(g, p)
@@ -31,21 +31,46 @@ func (u *UI) sideView(r drafting.Rect) {
 	u.head(g, p, r)
 	b.Unclip()
 	u.sideDimensions(g, p, r, small)
-	u.title(r, "Side view "+ratio(g.scale)+u.cutNote(g))
+	u.title(r, "Side view", g.scale)
 }
 
-func (u *UI) cutNote(g sight) string {
-	if g.cut {
-		return ", f broken"
-	}
-	return ""
+// sideMargins is the room for the dimensions left and right of the side view.
+func (u *UI) sideMargins() (left, right float64) {
+	small := u.look.Small()
+	return small*2 + 26, 46 + u.bench.Fonts.Width(u.bText(), small, true)
 }
 
-// title writes what a view is in its lower left corner.
-func (u *UI) title(r drafting.Rect, text string) {
+// brief is a dimension without its unit, as drawings have it.
+func (u *UI) brief(symbol string, mm float64) string {
+	v, _ := u.s.Units.In(desk.Length, mm)
+	return symbol + " " + desk.Significant(v, 3)
+}
+
+// bText is the dimension b as it is written.
+func (u *UI) bText() string {
+	return "b " + u.s.Units.Format(desk.Length, u.s.Filled.SpanMM(), 4)
+}
+
+// title writes what a view is in its lower left corner, with a bar of a round
+// length for its scale; a scale of zero says that there is none.
+func (u *UI) title(r drafting.Rect, text string, dpPerMM float64) {
 	b := &u.bench
 	st := u.look.Caption()
-	b.Text(drafting.Pt{X: r.X0 + touch.Unit, Y: r.Y1 - touch.Unit}, b.Fit(text, r.W()-2*touch.Unit, st), st)
+	y := r.Y1 - touch.Unit
+	end := b.Text(drafting.Pt{X: r.X0 + touch.Unit, Y: y}, b.Fit(text, r.W()-2*touch.Unit, st), st).X1
+	if dpPerMM <= 0 {
+		return
+	}
+	mm := u.s.Units.RoundStep(desk.Length, 0.2*r.W()/dpPerMM)
+	bar := drafting.Rect{X0: end + 12, Y0: y - 8, X1: end + 12 + mm*dpPerMM, Y1: y}
+	label := u.s.Units.Format(desk.Length, mm, 2)
+	if bar.X1+6+b.Fonts.Width(label, st.Size, false) > r.X1-4 {
+		return
+	}
+	mid := bar.Mid().X
+	b.Fill(drafting.Box(drafting.Rect{X0: bar.X0, Y0: bar.Y0 + 2, X1: mid, Y1: bar.Y1 - 1}), drafting.Line)
+	b.Frame(drafting.Rect{X0: bar.X0, Y0: bar.Y0 + 2, X1: bar.X1, Y1: bar.Y1 - 1}, drafting.Thin, drafting.Line)
+	b.Text(drafting.Pt{X: bar.X1 + 6, Y: y}, label, st)
 }
 
 // beam washes where the beam passes and draws its edges.
@@ -202,12 +227,19 @@ func (u *UI) openAs(r drafting.Rect, label string, p desk.Panel) {
 	if h := least - r.H(); h > 0 {
 		r.Y0, r.Y1 = r.Y0-h/2, r.Y1+h/2
 	}
-	r = r.And(u.bench.ClipBox())
+	r = inside(r, u.room)
 	u.bench.Target(r, label, u.toggle(p))
 	u.bench.Ring(label, r)
 	if u.s.Panel == p {
 		u.bench.Stroke(drafting.Box(r.Inset(1)), drafting.Medium, drafting.Beam)
 	}
+}
+
+// inside moves a rectangle into another, and cuts what is too large.
+func inside(r, room drafting.Rect) drafting.Rect {
+	dx := math.Max(0, room.X0-r.X0) - math.Max(0, r.X1-room.X1)
+	dy := math.Max(0, room.Y0-r.Y0) - math.Max(0, r.Y1-room.Y1)
+	return r.Moved(dx, dy).And(room)
 }
 
 // tubeHead draws a housing with its anode, as a symbol, not to scale.
@@ -252,17 +284,17 @@ func (u *UI) sideDimensions(g sight, p plan.Plan, r drafting.Rect, small float64
 	}
 	ext(x-4, g.source, g.cx-42)
 	ext(x-4, g.film+2, g.view.X0+4)
-	sfd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: g.source}, B: drafting.Pt{X: x, Y: g.film + 2}, Text: "SFD " + units.Format(desk.Length, p.Setup.SFDMM, 4), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut})
+	sfd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: g.source}, B: drafting.Pt{X: x, Y: g.film + 2}, Text: "SFD " + units.Format(desk.Length, p.Setup.SFDMM, 4), Brief: u.brief("SFD", p.Setup.SFDMM), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut})
 	u.open(sfd.And(r), "setup.sfdMM", "")
 
 	xr := g.view.X1 + 22
 	ext(g.cx+42, g.source, xr+4)
 	ext(g.view.X1-4, g.surface, xr+4)
 	ext(g.view.X1-4, g.film+2, xr+4)
-	f := b.Dimension(drafting.Dimension{A: drafting.Pt{X: xr, Y: g.source}, B: drafting.Pt{X: xr, Y: g.surface}, Text: "f " + units.Format(desk.Length, p.Setup.SFDMM-p.SpanMM(), 4), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut})
+	f := b.Dimension(drafting.Dimension{A: drafting.Pt{X: xr, Y: g.source}, B: drafting.Pt{X: xr, Y: g.surface}, Text: "f " + units.Format(desk.Length, p.Setup.SFDMM-p.SpanMM(), 4), Brief: u.brief("f", p.Setup.SFDMM-p.SpanMM()), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut})
 	f.Y1 = math.Min(f.Y1, g.surface-u.look.Target/2)
 	u.open(f.And(r), "setup.fMM", "")
-	bd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: xr, Y: g.surface}, B: drafting.Pt{X: xr, Y: g.film + 2}, Text: "b " + units.Format(desk.Length, p.SpanMM(), 4), Size: small, Bold: true, Ink: drafting.Line})
+	bd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: xr, Y: g.surface}, B: drafting.Pt{X: xr, Y: g.film + 2}, Text: u.bText(), Size: small, Bold: true, Ink: drafting.Line})
 	u.open(bd.And(drafting.Rect{X0: r.X0, Y0: g.surface - 6, X1: r.X1, Y1: r.Y1}), "setup.bMM", "")
 	u.coneDimension(g, p, small)
 	u.partTarget(g, p, small)

@@ -11,44 +11,45 @@ import (
 // cell is one field of the title block.
 type cell struct {
 	caption, value, note string
-	big                  bool // the sheet's answer
-	rope                 bool // marked as the boundary
-	span                 int  // columns, 1 or 2
+	big                  bool        // the sheet's answer
+	rope                 bool        // marked as the boundary
+	span                 int         // columns, 1 or 2
+	check                *desk.Check // a stamp instead
 	panel                desk.Panel
 	label                string // of its target
 }
 
 // titleBlock draws the answer and what the shot rests on, in cells that can
 // be touched, and the buttons to log and to see the working.
-func (u *UI) titleBlock(r drafting.Rect) {
+// The stamps stand in it where they have no room of their own.
+func (u *UI) titleBlock(r drafting.Rect, stamps bool) {
 	b := &u.bench
 	foot, cells := r.CutBottom(u.look.Target + 2*touch.Unit)
 	buttons := foot.Inset(touch.Unit).Columns(2, touch.Unit)
 	b.Button(touch.Button{Box: buttons[0], Label: "Log shot", Strong: true, Off: u.s.Fault != "" || u.s.Book.Fault != "", Do: u.toggle(desk.Panel{Kind: desk.LogPanel})})
 	b.Button(touch.Button{Box: buttons[1], Label: "Working", Selected: u.s.Panel.Kind == desk.WorkingPanel, Do: u.toggle(desk.Panel{Kind: desk.WorkingPanel})})
 	b.Line(drafting.Pt{X: foot.X0, Y: foot.Y0}, drafting.Pt{X: foot.X1, Y: foot.Y0}, drafting.Thin, drafting.Line)
-	u.grid("Title block", cells, u.shotCells())
+	u.grid("Title block", cells, u.shotCells(stamps))
 }
 
 // grid flows cells into rows; what does not fit scrolls.
 func (u *UI) grid(key string, r drafting.Rect, cells []cell) {
 	b := &u.bench
-	height := u.gridRows(r.W(), cells, nil)
+	height := u.gridRows(r.W(), u.columns(r.W()), cells, nil)
 	width := b.ScrollWidth(r, height)
-	height = u.gridRows(width, cells, nil)
+	height = u.gridRows(width, u.columns(width), cells, nil)
 	b.Scroll(key, r, height, func(in drafting.Rect) {
-		u.gridRows(in.W(), cells, func(box drafting.Rect, c cell) { u.cell(box.Moved(in.X0, in.Y0), c) })
+		u.gridRows(in.W(), u.columns(in.W()), cells, func(box drafting.Rect, c cell) { u.cell(box.Moved(in.X0, in.Y0), c) })
 	})
 }
 
 // columns is into how many columns a title block of a width is parted.
 func (u *UI) columns(width float64) int {
-	return max(1, min(4, int(width/(146*u.look.Text))))
+	return max(1, min(4, int(width/(116*u.look.Text))))
 }
 
-// gridRows places cells and returns the height of all rows.
-func (u *UI) gridRows(width float64, cells []cell, place func(drafting.Rect, cell)) float64 {
-	n := u.columns(width)
+// gridRows places cells in n columns and returns the height of all rows.
+func (u *UI) gridRows(width float64, n int, cells []cell, place func(drafting.Rect, cell)) float64 {
 	unit := width / float64(n)
 	y := 0.0
 	for i := 0; i < len(cells); {
@@ -79,17 +80,21 @@ func (u *UI) gridRows(width float64, cells []cell, place func(drafting.Rect, cel
 	return y
 }
 
-func (u *UI) valueStyle(c cell) drafting.Style {
-	if c.big {
-		return u.look.Answer()
+// valueStyle is large for the answer where it fits on its line.
+func (u *UI) valueStyle(c cell, width float64) drafting.Style {
+	if big := u.look.Answer(); c.big && u.bench.Fonts.Width(c.value, big.Size, true) <= width {
+		return big
 	}
 	return u.look.Strong()
 }
 
 func (u *UI) cellHeight(width float64, c cell) float64 {
 	b := &u.bench
+	if c.check != nil {
+		return b.StampHeight(c.check.Name, u.checkText(*c.check), width-touch.Unit) + touch.Unit
+	}
 	w := width - 2*touch.Unit - u.ropeRoom(c)
-	h := 1.5*touch.Unit + b.Height(w, c.caption, u.look.Caption()) + b.Height(w, c.value, u.valueStyle(c))
+	h := 1.5*touch.Unit + b.Height(w, c.caption, u.look.Caption()) + b.Height(w, c.value, u.valueStyle(c, w))
 	if c.note != "" {
 		h += b.Height(w, c.note, u.look.Caption())
 	}
@@ -116,14 +121,18 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	case c.panel.Kind != desk.NoPanel:
 		b.Fill(drafting.Box(r.Inset(0.5)), drafting.Block)
 	}
-	b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Hair, drafting.Faint)
-	b.Line(drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Hair, drafting.Faint)
+	b.Line(drafting.Pt{X: r.X0, Y: r.Y1 - 1}, drafting.Pt{X: r.X1, Y: r.Y1 - 1}, drafting.Hair, drafting.Faint)
+	b.Line(drafting.Pt{X: r.X1 - 1, Y: r.Y0}, drafting.Pt{X: r.X1 - 1, Y: r.Y1}, drafting.Hair, drafting.Faint)
+	if c.check != nil {
+		u.stamp(r.Inset(touch.Unit/2), *c.check)
+		return
+	}
 	in := drafting.Rect{X0: r.X0 + touch.Unit + u.ropeRoom(c), Y0: r.Y0 + 0.6*touch.Unit, X1: r.X1 - touch.Unit, Y1: r.Y1}
 	if c.rope {
 		b.Line(drafting.Pt{X: r.X0 + 8, Y: r.Y0 + 6}, drafting.Pt{X: r.X0 + 8, Y: r.Y1 - 6}, 4, drafting.Rope, drafting.Cord()...)
 	}
 	in.Y0 += b.Paragraph(in, c.caption, u.look.Caption())
-	in.Y0 += b.Paragraph(in, c.value, u.valueStyle(c))
+	in.Y0 += b.Paragraph(in, c.value, u.valueStyle(c, in.W()))
 	if c.note != "" {
 		b.Paragraph(in, c.note, u.look.Caption())
 	}
@@ -146,13 +155,13 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 // answerHeight is the height of the band that keeps the answer in view while a
 // panel is open.
 func (u *UI) answerHeight(width float64) float64 {
-	return u.gridRows(width, u.bandCells(), nil)
+	return u.gridRows(width, 2, u.bandCells(), nil)
 }
 
 func (u *UI) answerBand(r drafting.Rect) {
 	b := &u.bench
 	b.Line(drafting.Pt{X: r.X0, Y: r.Y0}, drafting.Pt{X: r.X1, Y: r.Y0}, drafting.Bold, drafting.Line)
-	u.gridRows(r.W(), u.bandCells(), func(box drafting.Rect, c cell) { u.cell(box.Moved(r.X0, r.Y0), c) })
+	u.gridRows(r.W(), 2, u.bandCells(), func(box drafting.Rect, c cell) { u.cell(box.Moved(r.X0, r.Y0), c) })
 }
 
 func (u *UI) bandCells() []cell {

@@ -27,8 +27,9 @@ type UI struct {
 	search widget.Editor // narrows a list of materials
 	given  float64       // time given as set in the log panel, s
 	who    string
-	fields []textField // of this frame
-	panel  desk.Panel  // of the last frame, to start a panel afresh
+	fields []textField   // of this frame
+	room   drafting.Rect // where targets of the drawing may stand
+	panel  desk.Panel    // of the last frame, to start a panel afresh
 }
 
 // New makes the sheets with the bundled fonts.

@@ -45,15 +45,15 @@ const (
 func (d *Dial) Typing() string { return d.typed }
 
 // Layout draws the dial in a box: value with plus and minus, below it the
-// scale or the keypad.
-func (d *Dial) Layout(b *Bench, r drafting.Rect, s DialSpec) {
+// scale or the keypad. The head leaves a notch free at its right end.
+func (d *Dial) Layout(b *Bench, r drafting.Rect, notch float64, s DialSpec) {
 	if d.field != s.Field {
 		d.field, d.typed = s.Field, ""
 	}
 	d.hardwareKeys(b, s)
-	side := b.Look.Target + Unit
 	head, rest := r.CutTop(d.headHeight(b))
-	d.head(b, head, side, s)
+	head.X1 -= notch
+	d.head(b, head, b.Look.Target+Unit, s)
 	_, rest = rest.CutTop(Unit)
 	if d.Keypad {
 		d.keypad(b, rest, s)
@@ -65,7 +65,7 @@ func (d *Dial) Layout(b *Bench, r drafting.Rect, s DialSpec) {
 // Height is what the dial needs.
 func (d *Dial) Height(b *Bench) float64 {
 	if d.Keypad {
-		return d.headHeight(b) + Unit + 4*(b.Look.Target) + 3*4
+		return d.headHeight(b) + Unit + 4*b.Look.Target + 3*4
 	}
 	return d.headHeight(b) + Unit + 88
 }
@@ -167,7 +167,7 @@ func (d *Dial) ruler(b *Bench, r drafting.Rect, s DialSpec) {
 	b.Unclip()
 	b.Frame(scale, drafting.Thin, drafting.Line)
 	b.Fill(drafting.Poly(true, drafting.Pt{X: x - 9, Y: scale.Y0}, drafting.Pt{X: x + 9, Y: scale.Y0}, drafting.Pt{X: x, Y: scale.Y0 + 13}), drafting.Beam)
-	b.Line(drafting.Pt{X: x, Y: scale.Y0}, drafting.Pt{X: x, Y: scale.Y1}, drafting.Medium, drafting.Beam)
+	b.Line(drafting.Pt{X: x, Y: scale.Y0}, drafting.Pt{X: x, Y: scale.Y0 + 26}, drafting.Medium, drafting.Beam)
 	b.DragTarget(scale, "Scale of "+s.Label, func(g Drag) { d.scrub(b, s, g) })
 }
 
@@ -196,14 +196,9 @@ func (d *Dial) ticks(b *Bench, r drafting.Rect, x float64, s DialSpec) {
 	lo, hi := clamp(s.moved(s.Value, x-r.X0), s.Min, s.Max), clamp(s.moved(s.Value, x-r.X1), s.Min, s.Max)
 	a := drafting.Axis{Lo: lo, Hi: hi, From: s.place(x, lo), To: s.place(x, hi), Log: s.Log}
 	small := drafting.Style{Size: b.Look.Small(), Ink: drafting.Line, Align: drafting.Middle}
-	step := 0.0
-	if ticks := a.Ticks(9); len(ticks) > 1 {
-		step = ticks[1] - ticks[0]
-	}
 	for _, v := range (drafting.Axis{Lo: lo, Hi: hi}).Ticks(40) {
 		b.Line(drafting.Pt{X: a.At(v), Y: r.Y0}, drafting.Pt{X: a.At(v), Y: r.Y0 + 8}, drafting.Hair, drafting.Faint)
 	}
-	_ = step
 	last := math.Inf(-1)
 	for _, v := range s.Usual {
 		if v < lo || v > hi {
@@ -235,32 +230,34 @@ func (b *Bench) ends(r drafting.Rect, s DialSpec, lo, hi float64) {
 	}
 }
 
-// keypad draws the keys: figures, point, units, erase and set.
+// keypad draws the keys: figures, point and stroke, then units, then erase,
+// back to the scale, and set.
 func (d *Dial) keypad(b *Bench, r drafting.Rect, s DialSpec) {
-	_, side := r.CutRight(0)
-	side, r = r.CutRight((r.W() - 3*4) / 4 * 1)
-	_, side = side.CutLeft(4)
-	keys := [][]string{{"7", "8", "9"}, {"4", "5", "6"}, {"1", "2", "3"}, {"0", ".", "erase"}}
+	keys := [][]string{{"7", "8", "9"}, {"4", "5", "6"}, {"1", "2", "3"}, {"0", ".", "/"}}
 	for i, row := range r.Rows(4, 4) {
-		for j, cell := range row.Columns(3, 4) {
-			d.key(b, cell, keys[i][j])
+		cells := row.Columns(5, 4)
+		for j, k := range keys[i] {
+			b.Button(Button{Box: cells[j], Label: "Key " + k, Text: k, Do: func() { d.typeRune(k) }})
 		}
+		if i < len(s.Units) {
+			unit := s.Units[i]
+			b.Button(Button{Box: cells[3], Label: "Unit " + unit, Text: unit, Off: d.typed == "", Do: func() { d.commit(s, d.typed+" "+unit) }})
+		}
+		d.actionKey(b, i, cells[4], s)
 	}
-	units := s.Units[:min(len(s.Units), 2)]
-	cells := side.Rows(4, 4)
-	for i, u := range units {
-		b.Button(Button{Box: cells[i], Label: "Unit " + u, Text: u, Off: d.typed == "", Do: func() { d.commit(s, d.typed+" "+u) }})
-	}
-	d.padButton(b, cells[2])
-	b.Button(Button{Box: cells[3], Label: "Set", Strong: d.typed != "", Off: d.typed == "", Do: func() { d.commit(s, d.typed) }})
 }
 
-func (d *Dial) key(b *Bench, r drafting.Rect, k string) {
-	if k == "erase" {
-		b.Button(Button{Box: r, Label: "Erase", Symbol: b.Erase, Do: d.erase})
-		return
+// actionKey is a key of the right-hand column; the last two rows are one key.
+func (d *Dial) actionKey(b *Bench, row int, cell drafting.Rect, s DialSpec) {
+	switch row {
+	case 0:
+		b.Button(Button{Box: cell, Label: "Erase", Symbol: b.Erase, Off: d.typed == "", Do: d.erase})
+	case 1:
+		d.padButton(b, cell)
+	case 2:
+		cell.Y1 += cell.H() + 4
+		b.Button(Button{Box: cell, Label: "Set", Strong: d.typed != "", Off: d.typed == "", Do: func() { d.commit(s, d.typed) }})
 	}
-	b.Button(Button{Box: r, Label: "Key " + k, Text: k, Do: func() { d.typeRune(k) }})
 }
 
 const maxTyped = 16

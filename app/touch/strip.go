@@ -49,9 +49,9 @@ func (t *Strip) Layout(b *Bench, r drafting.Rect, s StripSpec) {
 	}
 	x := drafting.Axis{Lo: s.Lo, Hi: s.Hi, From: plot.X0, To: plot.X1, Log: s.Log}
 	y := timeAxis(s, plot)
-	b.Text(drafting.Pt{X: r.X0, Y: r.Y0 + small}, "exposure time", drafting.Style{Size: small, Ink: drafting.Faint})
+	b.Text(drafting.Pt{X: r.X0, Y: r.Y0 + small}, b.fit("exposure time against "+s.XTitle, r.W(), small, false), drafting.Style{Size: small, Ink: drafting.Faint})
 	t.shadeShort(b, s, x, plot)
-	b.Vertical(drafting.Scale{Axis: y, Across: plot.X0, Reach: plot.X1, Size: small, Count: max(2, int(plot.H()/(small*2.4))), Format: s.YFigure})
+	b.Vertical(drafting.Scale{Axis: y, Across: plot.X0, Reach: plot.X1, Size: small, Marks: timeMarks(), Format: s.YFigure})
 	b.Horizontal(drafting.Scale{Axis: x, Across: plot.Y1, Reach: plot.Y0, Size: small, Count: max(2, int(plot.W()/(small*5))), Format: s.XFigure})
 	b.Clip(drafting.Box(plot))
 	t.curve(b, s, x, y)
@@ -77,6 +77,11 @@ func timeAxis(s StripSpec, plot drafting.Rect) drafting.Axis {
 		lo, hi = m/1.5, m*1.5
 	}
 	return drafting.Axis{Lo: lo / 1.15, Hi: hi * 1.15, From: plot.Y1, To: plot.Y0, Log: true}
+}
+
+// timeMarks are the times that a clock face has.
+func timeMarks() []float64 {
+	return []float64{0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 30, 60, 120, 300, 600, 1200, 1800, 3600, 7200, 18000, 36000, 86400, 172800}
 }
 
 // shadeShort hatches where a rule falls short.
