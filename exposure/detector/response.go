@@ -208,8 +208,8 @@ func Response(keV float64, screensMM [2]float64) float64 {
 
 // Screens are a pair of lead screens ready for many energies.
 type Screens struct {
-	mm    [2]float64
-	grown [2]float64
+	frontMM float64
+	dose    curve // keV/g in the coating per photon/cm2 that reaches it
 }
 
 // electronKeVOfScreens is where a thin screen's growth is taken: electrons of
@@ -219,26 +219,26 @@ const electronKeVOfScreens = 200
 
 // NewScreens takes thicknesses in mm, front and back, 0 for none.
 func NewScreens(mm [2]float64) Screens {
-	s := Screens{mm: mm}
-	for i, t := range mm {
-		s.grown[i] = -math.Expm1(-t / 10 * leadDensity * math.Log(100) / rangeGPerCM2(electronKeVOfScreens))
+	var grown float64
+	for _, t := range mm {
+		grown -= math.Expm1(-t / 10 * leadDensity * math.Log(100) / rangeGPerCM2(electronKeVOfScreens))
 	}
-	return s
+	own, base, far, lead, farLead := ownCurve().value, baseCurve().value, farBaseCurve().value, leadCurve().value, farLeadCurve().value
+	dose := make([]float64, len(own))
+	for i := range dose {
+		dose[i] = own[i] + (base[i]-far[i])/2
+		dose[i] += (grown*lead[i] + (2-grown)*base[i]) / 4
+		dose[i] += (grown*farLead[i] + (2-grown)*far[i]) / 4
+	}
+	return Screens{mm[0], curve{dose}}
 }
 
 // Response is the package's Response with these screens.
 func (s Screens) Response(keV float64) float64 {
-	base, far := baseCurve().at(keV), farBaseCurve().at(keV)
-	dose := ownCurve().at(keV) + (base-far)/2
-	lead, farLead := leadCurve().at(keV), farLeadCurve().at(keV)
-	for _, grown := range s.grown {
-		dose += (grown*lead + (1-grown)*base) / 4
-		dose += (grown*farLead + (1-grown)*far) / 4
-	}
 	const nGyPerKeVPerG = 1.602176634e-4 // 1 keV/g in nGy
-	dose *= nGyPerKeVPerG
-	if s.mm[0] > 0 {
-		dose *= math.Exp(-media().lead.material.MuPerMM(min(max(keV, FirstKeV), LastKeV)) * s.mm[0])
+	dose := s.dose.at(keV) * nGyPerKeVPerG
+	if s.frontMM > 0 {
+		dose *= math.Exp(-media().lead.material.MuPerMM(min(max(keV, FirstKeV), LastKeV)) * s.frontMM)
 	}
 	return dose
 }
