@@ -193,7 +193,7 @@ func (p Plan) validateSetup(f *faults) {
 
 func (p Plan) validateSFD(f *faults) {
 	s := p.Setup
-	if inside := p.Part.ODMM - p.Part.WallMM + p.GapMM(); s.Side == Inside && p.Part.ODMM > 0 && s.SFDMM >= inside*(1-slack) {
+	if inside := p.Part.ODMM - p.Part.WallMM + p.GapMM(); (s.Side == Inside || s.Kind == Panoramic) && p.Part.ODMM > 0 && s.SFDMM >= inside*(1-slack) {
 		f.add(FieldError{Field: "setup.sfdMM", Value: format(s.SFDMM), Problem: "puts the source outside the pipe", Allowed: fmt.Sprintf("less than %s mm, the far inner wall", round(inside)), Mend: fmt.Sprintf("set %s mm or less", down(inside*(1-1e-6)))})
 		return
 	}

@@ -1,0 +1,132 @@
+package rules
+
+import (
+	"fmt"
+	"strings"
+)
+
+// Verdict of a check.
+type Verdict string
+
+// The verdicts.
+const (
+	Holds     Verdict = "holds"
+	Short     Verdict = "short"
+	Undecided Verdict = "undecided"
+)
+
+// Check is one rule applied to a plan.
+type Check struct {
+	ID         string
+	Title      string
+	Verdict    Verdict
+	Value      float64
+	Limit      float64
+	Unit       string
+	Text       string // the finding in a sentence, then what the rule asks
+	Clause     string // "ISO 17636-1:2013, 7.6"
+	Confidence string // one of Confidences
+	From       string // company file; "" for ours
+	Mend       *Mend  // set by Mends' caller; nil where it holds or nothing helps
+}
+
+// Source cites the check for a working: document, clause, confidence, and the
+// company's file where the row came from one.
+func (c Check) Source() string {
+	s := c.Clause + "; " + Confidences[c.Confidence]
+	if c.From != "" {
+		s += "; company table " + c.From
+	}
+	return s
+}
+
+// edition stands with every figure that nobody read in the document.
+const edition = "check against the edition in force"
+
+// Apply judges the facts by every row of the set that applies, in the order of
+// the set. A row of low confidence, and a recommendation that is not met, come
+// out undecided. Where the set has figures for other materials only, that is an
+// undecided check too: a rule that is not there does not pass.
+func (s Set) Apply(f Facts) []Check {
+	list := []Check{}
+	told := map[string]bool{}
+	for _, row := range s.Rows {
+		if told[row.ID] || !row.For.covers(f) {
+			continue
+		}
+		rule, err := row.rule()
+		if err != nil {
+			panic("rules: " + err.Error()) // read has checked every row
+		}
+		if !rule.applies(f) {
+			continue
+		}
+		if !row.For.coversFamily(f) {
+			if s.another(row, f) {
+				continue
+			}
+			told[row.ID] = true
+			list = append(list, row.finish(judgement{verdict: Undecided, text: noFamily(f)}))
+			continue
+		}
+		told[row.ID] = true
+		list = append(list, row.finish(rule.judge(f)))
+	}
+	return list
+}
+
+// another tells whether a later or earlier row of the same ID covers the
+// material.
+func (s Set) another(row Row, f Facts) bool {
+	for _, r := range s.Rows {
+		if r.ID == row.ID && r.For.covers(f) && r.For.coversFamily(f) {
+			return true
+		}
+	}
+	return false
+}
+
+func noFamily(f Facts) string {
+	if f.Family == "" {
+		return "layers of different materials: the rule has no figure for them"
+	}
+	return "the rule has no figure for material of family " + f.Family
+}
+
+func (r Row) finish(j judgement) Check {
+	c := Check{ID: r.ID, Title: r.Title, Verdict: j.verdict, Value: j.value, Limit: j.limit, Unit: j.unit, Clause: r.Document + ", " + r.Clause, Confidence: r.Confidence, From: r.From}
+	parts := []string{j.text, r.Text}
+	switch {
+	case r.Confidence == "low" && j.verdict != Undecided:
+		c.Verdict = Undecided
+		parts = append(parts, "guidance only, the figure is of low confidence")
+	case r.Guidance && j.verdict == Short:
+		c.Verdict = Undecided
+		parts = append(parts, "a recommendation, not met")
+	}
+	if r.Confidence != "seen" && r.Confidence != "company" {
+		parts = append(parts, edition)
+	}
+	c.Text = strings.Join(parts, "; ")
+	return c
+}
+
+// at most and at least are the two ways to hold a figure against a limit, with
+// room for decimals that are equal on paper.
+const slack = 1e-9
+
+func atMost(v, limit float64) Verdict {
+	if v <= limit*(1+slack) {
+		return Holds
+	}
+	return Short
+}
+
+func atLeast(v, limit float64) Verdict {
+	if v >= limit*(1-slack) {
+		return Holds
+	}
+	return Short
+}
+
+func say(format string, args ...any) string { return fmt.Sprintf(format, args...) }
