@@ -95,11 +95,15 @@ func (in Input) spread() float64 {
 }
 
 // onShare is the share of an hour with the beam on: all of it where the number
-// of shots is not stated.
-func (in Input) onShare() float64 {
+// of shots is not stated. In any one hour there are whole shots, so that two in
+// three hours may both fall into it.
+func (in Input) onShare(anyHour bool) float64 {
 	n := in.Plan.Site.ShotsPerHour
 	if n == 0 {
 		return 1
+	}
+	if anyHour {
+		n = math.Ceil(n)
 	}
 	return min(1, n*in.ExposureSecondsHigh/3600)
 }
@@ -117,7 +121,7 @@ func (in Input) allowed(l plan.Limit) (float64, working.Step) {
 	if l.Per == "hour" || occupancy == 0 {
 		occupancy = 1 // in any one hour somebody may stand there all of it
 	}
-	share := in.onShare()
+	share := in.onShare(l.Per == "hour")
 	step.Formula = "H'L = H / (T s o)"
 	step.Value = l.DoseUSv / (hours * share * occupancy)
 	step.Inputs = []working.Input{
@@ -162,7 +166,7 @@ func (in Input) rates() ([]rate, error) {
 	if t := in.Plan.Source.Tube; t != nil {
 		list = append(list, rate{Leakage, working.Step{Name: "H*(10) rate of the housing's leakage at 1 m", Formula: "H'1 = K' h_max", Value: t.LeakageMGyPerHAt1m * 1000 * mostAmbientPerKerma,
 			Inputs: []working.Input{{Symbol: "K'", Name: "leakage, air kerma", Value: t.LeakageMGyPerHAt1m, Unit: "mGy/h", Source: "certificate, or the most of its class"},
-				{Symbol: "h_max", Name: "largest H*(10) per air kerma", Value: mostAmbientPerKerma, Unit: "Sv/Gy", Source: "ICRP 74, at 60 keV"}}}})
+				{Symbol: "h_max", Name: "largest H*(10) per air kerma", Value: mostAmbientPerKerma, Unit: "Sv/Gy", Source: "ICRP 74, near 65 keV"}}}})
 	} else if c := in.Plan.Source.Sealed; len(c.Collimator) > 0 {
 		v, err := in.behindCollimator(c.Collimator)
 		if err != nil {
@@ -182,8 +186,9 @@ func (in Input) rates() ([]rate, error) {
 	return list, nil
 }
 
-// mostAmbientPerKerma is the largest H*(10) per air kerma of ICRP 74, Sv/Gy.
-const mostAmbientPerKerma = 1.74
+// mostAmbientPerKerma is no less than the largest H*(10) per air kerma at any
+// energy, Sv/Gy: ICRP 74 has 1.74 at 60 keV, its interpolation a little more.
+const mostAmbientPerKerma = 1.75
 
 // ambientPerFluence gives H*(10) in uSv per photon per cm2.
 func ambientPerFluence(keV float64) float64 {
@@ -249,28 +254,31 @@ const mostHalfConeDeg = 60
 
 // scatter is the largest rate at 1 m off the part, outside the useful beam.
 // The lit area and the fluence on it go as f^2 and 1/f^2, so that the distance
-// of the part falls out.
+// of the part falls out. A part of several materials counts as the one that
+// scatters most.
 func (in Input) scatter() (float64, error) {
-	layers := in.Plan.Part.Layers
-	m, err := materials.Lookup(layers[0].Material)
-	if err != nil {
-		return 0, err
-	}
-	var mm float64
-	for _, l := range layers {
-		mm += l.MM
-	}
 	keV, perCM2 := grouped(in.Spectrum)
-	e, err := transport.Emitted(m, mm, keV, perCM2)
-	if err != nil {
-		return 0, err
-	}
 	half := min(in.coneDeg()/2, mostHalfConeDeg)
-	var worst float64
-	for deg := half; deg <= 180; deg += 5 {
-		worst = max(worst, e.Weighted(deg, ambientPerFluence))
-	}
 	t := math.Tan(half * math.Pi / 180)
+	var worst float64
+	seen := map[string]bool{}
+	for _, l := range in.Plan.Part.Layers {
+		if seen[l.Material] {
+			continue
+		}
+		seen[l.Material] = true
+		m, err := materials.Lookup(l.Material)
+		if err != nil {
+			return 0, err
+		}
+		e, err := transport.Emitted(m, in.Plan.Part.TotalMM(), keV, perCM2)
+		if err != nil {
+			return 0, err
+		}
+		for deg := half; deg <= 180; deg += 5 {
+			worst = max(worst, e.Weighted(deg, ambientPerFluence))
+		}
+	}
 	return worst * math.Pi * t * t * in.Strength * 3600, nil
 }
 
