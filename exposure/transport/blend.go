@@ -22,7 +22,7 @@ type blend struct {
 	pairs [blendCount][2]share
 }
 
-// The energies where the pairs are found are even in the logarithm.
+// The energies where the pairs are found are even in octaves.
 const (
 	blendCount = 48
 	blendFirst = 10.0
@@ -30,8 +30,8 @@ const (
 )
 
 var (
-	blendLn    = math.Log(blendFirst)
-	blendPerLn = (blendCount - 1) / math.Log(blendLast/blendFirst)
+	blendFrom  = octaves(blendFirst)
+	blendScale = (blendCount - 1) / (octaves(blendLast) - blendFrom)
 )
 
 // blends remembers by material and by composition, so that a material at
@@ -78,7 +78,7 @@ func composition(m *materials.Material) string {
 func newBlend(m *materials.Material, key string) *blend {
 	b := &blend{}
 	for i := range b.pairs {
-		b.pairs[i] = bracket(m, math.Exp(blendLn+float64(i)/blendPerLn))
+		b.pairs[i] = bracket(m, keVOf(blendFrom+float64(i)/blendScale))
 	}
 	for i := range table() {
 		if key == composition(table()[i].material) {
@@ -90,9 +90,14 @@ func newBlend(m *materials.Material, key string) *blend {
 	return b
 }
 
+// keVOf is the inverse of octaves.
+func keVOf(lg float64) float64 {
+	return math.Float64frombits(uint64(eightKeV) + uint64(lg*(1<<52)))
+}
+
 // at gives the pair for an energy: the nearest of the blend.
-func (b *blend) at(lnKeV float64) *[2]share {
-	i := int((lnKeV-blendLn)*blendPerLn + 0.5)
+func (b *blend) at(lg float64) *[2]share {
+	i := int((lg-blendFrom)*blendScale + 0.5)
 	return &b.pairs[max(0, min(blendCount-1, i))]
 }
 

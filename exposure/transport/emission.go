@@ -61,16 +61,15 @@ func Scattered(m *materials.Material, mm, keV, angleDeg float64) (edgesKeV, mean
 
 // addSides adds what n photons of an energy send out of a slab x mean free paths thick.
 func addSides(sum *[2]sideTable, b *blend, keV, x, n float64) {
-	ln := math.Log(keV)
-	for _, s := range b.at(ln) {
+	lg := octaves(keV)
+	for _, s := range b.at(lg) {
 		if s.weight == 0 {
 			continue
 		}
 		t := &table()[s.base]
-		j := search(t.lnKeV, ln)
-		f := max(0, min(1, (ln-t.lnKeV[j])/(t.lnKeV[j+1]-t.lnKeV[j])))
-		t.nodes[j].addSides(sum, x, n*s.weight*(1-f))
-		t.nodes[j+1].addSides(sum, x, n*s.weight*f)
+		p := t.find(lg)
+		t.nodes[p.node].addSides(sum, x, n*s.weight*(1-p.part))
+		t.nodes[p.node+1].addSides(sum, x, n*s.weight*p.part)
 	}
 }
 

@@ -22,7 +22,8 @@ const (
 // base is one material of the table.
 type base struct {
 	material *materials.Material
-	lnKeV    []float64
+	octaves  []float64         // of the nodes' energies, see octaves
+	start    [startCount]uint8 // node at or before each 16th of an octave
 	nodes    []node
 }
 
@@ -59,9 +60,10 @@ var table = sync.OnceValue(func() []base {
 		}
 		all[i] = base{material: m, nodes: make([]node, len(list))}
 		for j, e := range list {
-			all[i].lnKeV = append(all[i].lnKeV, math.Log(e))
+			all[i].octaves = append(all[i].octaves, octaves(e))
 			all[i].nodes[j].keV, all[i].nodes[j].inverse = e, 1/e
 		}
+		all[i].index()
 		count += len(list)
 	}
 	data, err := cells.Unpack(packed, count)
@@ -76,6 +78,17 @@ var table = sync.OnceValue(func() []base {
 	}
 	return all
 })
+
+// index fills start.
+func (b *base) index() {
+	j := 0
+	for i := range b.start {
+		for j < len(b.octaves)-2 && b.octaves[j+1] <= float64(i)/startsPerOctave {
+			j++
+		}
+		b.start[i] = uint8(j)
+	}
+}
 
 // fill takes a cell of the table.
 func (n *node) fill(c *cells.Packed) {

@@ -34,3 +34,21 @@ func BroadTransmission(m *materials.Material, mm float64, keV, perCM2 []float64,
 
 // KermaPerFluence gives air kerma per photon/cm2 in pGy cm2, at 1 to 20000 keV: a weight for BroadTransmission.
 func KermaPerFluence(keV float64) float64 { return photon.KermaPerFluence(keV) }
+
+// Oblique rays: how much of the added path counts, and the steepest angle that counts.
+const (
+	obliqueCredit = 0.2
+	obliqueMost   = 75.0
+)
+
+// ObliqueMM gives the thickness of a wall, hit normally, that stands for a wall
+// mm thick hit at angleDeg from its normal, 0 to 90. Scattered photons leave
+// the slanted path for the short way out, so the length along the ray,
+// mm/cos(angle), promises too much: 4 times too little dose behind 10 mean free
+// paths of concrete at 45 deg, 15 times at 60. A fifth of the added length is
+// credited, which our Monte Carlo finds safe from 10 keV to 3 MeV (compared
+// for concrete, steel and lead); it errs outward.
+func ObliqueMM(mm, angleDeg float64) float64 {
+	a := min(math.Abs(angleDeg), obliqueMost) * math.Pi / 180
+	return mm * (1 + obliqueCredit*(1/math.Cos(a)-1))
+}

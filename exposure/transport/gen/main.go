@@ -22,6 +22,7 @@ import (
 	"sync"
 	"time"
 
+	"halfvalue/exposure/transport"
 	"halfvalue/exposure/transport/internal/cells"
 )
 
@@ -134,26 +135,13 @@ func cell(work string, t task, effort cells.Effort) (cells.Cell, error) {
 	return c, os.Rename(path+".part", path)
 }
 
-// Provenance is data/provenance.json.
-type Provenance struct {
-	Generator  string           `json:"generator"`
-	Version    int              `json:"version"`
-	Effort     string           `json:"effort"`
-	Arch       string           `json:"arch"`
-	Go         string           `json:"go"`
-	Seed       uint64           `json:"seed"`
-	SHA256     string           `json:"sha256"`
-	Collisions int64            `json:"collisions"`
-	Histories  map[string][]int `json:"histories"`
-}
-
 func write(out, effort string, all []cells.Cell) error {
 	data, err := cells.Pack(all)
 	if err != nil {
 		return err
 	}
 	sum := sha256.Sum256(data)
-	p := Provenance{
+	p := transport.Provenance{
 		Generator: "go run ./exposure/transport/gen", Version: cells.Version, Effort: effort, Arch: runtime.GOARCH, Go: runtime.Version(),
 		Seed: cells.Seed, SHA256: hex.EncodeToString(sum[:]), Histories: map[string][]int{},
 	}

@@ -13,8 +13,8 @@ type Layer struct {
 	GPerCM2 float64 // mass thickness
 }
 
-// Slab describes a run: a plane-parallel beam falls normally on a stack of
-// layers. Planes inside the stack stand for thinner slabs: what crosses a
+// Slab describes a run: a plane-parallel beam falls on a stack of layers,
+// normally if Cosine is not set. Planes inside the stack stand for thinner slabs: what crosses a
 // plane for the first time is what leaves the far side of the slab that ends
 // there, since a photon's way up to then does not know what lies behind. So
 // one run answers for every thickness.
@@ -23,6 +23,7 @@ type Slab struct {
 	Planes    []float64 // rising depths, g/cm2; the last is the whole stack; nil: only the last
 	KeV       []float64 // source lines
 	Weight    []float64 // photons in each, any unit; nil: one each
+	Cosine    float64   // of the beam against the normal; 0: 1
 	Histories int       // first collisions in all batches
 	Batches   int       // 0: 16
 	Seed      uint64
@@ -80,12 +81,19 @@ type geometry struct {
 	keV    []float64
 	upTo   []float64 // summed share of the source lines
 	share  []float64
-	depth  []float64 // optical depth of the whole stack for each line
+	depth  []float64 // mean free paths through the whole stack along the beam, for each line
+	cosine float64
 	window window
 }
 
 func newGeometry(s Slab) (*geometry, error) {
-	g := &geometry{layers: s.Layers, planes: s.Planes, keV: s.KeV}
+	g := &geometry{layers: s.Layers, planes: s.Planes, keV: s.KeV, cosine: 1}
+	if s.Cosine != 0 {
+		g.cosine = s.Cosine
+	}
+	if !(g.cosine > 0.01 && g.cosine <= 1) {
+		return nil, fmt.Errorf("photon: cosine \"%g\" of the beam is outside 0.01 to 1", s.Cosine)
+	}
 	var z float64
 	for i, l := range s.Layers {
 		if l.Medium == nil || !(l.GPerCM2 > 0) || math.IsInf(l.GPerCM2, 0) {
@@ -128,7 +136,7 @@ func (g *geometry) source(s Slab) error {
 		sum += w
 		g.share = append(g.share, w)
 		g.upTo = append(g.upTo, sum)
-		g.depth = append(g.depth, g.opticalDepth(e, g.bounds[len(g.bounds)-1]))
+		g.depth = append(g.depth, g.opticalDepth(e, g.bounds[len(g.bounds)-1])/g.cosine)
 	}
 	if !(sum > 0) {
 		return fmt.Errorf("photon: the source is empty")
@@ -199,7 +207,7 @@ func (g *geometry) gather(all []*walker) Result {
 			r.RelErr[k] = min(1, math.Sqrt(max(0, v))/p.Kerma)
 		}
 		for i, e := range g.keV {
-			r.Primary[k] += g.share[i] * math.Exp(-g.opticalDepth(e, g.planes[k])) * kerma(e)
+			r.Primary[k] += g.share[i] * math.Exp(-g.opticalDepth(e, g.planes[k])/g.cosine) * kerma(e)
 		}
 	}
 	for i, e := range g.keV {

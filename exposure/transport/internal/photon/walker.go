@@ -71,8 +71,8 @@ func (w *walker) start(line int, q float64) {
 		x = (2*q - 1) * all
 	}
 	density := 0.5/((x+early)*span) + 0.5/all
-	z, layer := w.depthOf(e, x)
-	p := particle{z: z, u: 1, e: e, layer: layer, w: math.Exp(-x) / density}
+	z, layer := w.depthOf(e, x*w.cosine)
+	p := particle{z: z, u: w.cosine, e: e, layer: layer, w: math.Exp(-x) / density}
 	p.plane = sort.SearchFloat64s(w.geometry.planes, z)
 	if p.plane < len(w.planes) {
 		w.collide(p)
