@@ -27,6 +27,7 @@ type Desk struct {
 	book     Book
 	past     []step // what Undo goes back to, the last step last
 	future   []step // what Redo goes to
+	pushed   int    // steps ever made
 	scrub    string // field whose step is still open
 	event    string // identity of the log button's press that is not yet acknowledged
 	trace    tracer
@@ -180,7 +181,9 @@ func (d *Desk) set(in Set) {
 	to := math.Min(math.Max(tidy(in.To), l.Min), l.Max)
 	open := d.scrub == in.Field
 	name := l.Label() + " " + l.Text(d.state.Units)
-	if d.replace(name, open, func(p *plan.Plan) { l.set(p, to) }) && in.More {
+	before := d.pushed
+	d.replace(name, open, func(p *plan.Plan) { l.set(p, to) })
+	if in.More && d.pushed > before {
 		d.scrub = in.Field
 	}
 	if open && !in.More {
@@ -329,6 +332,7 @@ func (d *Desk) accept(name string, merge bool, p plan.Plan, data []byte) bool {
 	}
 	if !merge {
 		d.past = append(d.past, step{name, d.state.PlanBytes})
+		d.pushed++
 		d.past = d.past[max(0, len(d.past)-maxSteps):]
 	}
 	d.future = nil

@@ -16,8 +16,9 @@ type tracer struct {
 	key   string    // what the curve depends on besides its own quantity
 }
 
-// curvePoints is how finely a whole curve is drawn.
-const curvePoints = 49
+// curvePoints is how finely a whole curve is drawn: one more than a power of
+// two, so that halving the stride never meets a value twice.
+const curvePoints = 33
 
 // retrace starts a new curve if what it depends on has changed. Scrubbing the
 // curve's own quantity changes nothing in it.

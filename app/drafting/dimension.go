@@ -15,6 +15,7 @@ type Dimension struct {
 	Size  float64
 	Bold  bool
 	Ink   Ink
+	Left  bool // level text of an upright line stands at its left
 	// Break cuts the line with a zigzag: the distance is not drawn whole.
 	Break bool
 }
@@ -103,12 +104,26 @@ func (d *Drawing) dimensionText(a, b, u Pt, m Dimension) Rect {
 	mid := a.Add(b).Mul(0.5)
 	if w > room {
 		if math.Abs(u.X) < 1e-6 {
-			return d.Text(Pt{mid.X + 8, mid.Y + CapHeight*m.Size/2}, m.Text, Style{Size: m.Size, Bold: m.Bold, Ink: Line, Knock: true})
+			return d.levelText(mid, m)
 		}
 		mid = b.Add(u.Mul(2*arrowLong + w/2 + 2))
 	}
 	at := mid.Add(up.Mul(4))
 	return d.Text(at, m.Text, Style{Size: m.Size, Bold: m.Bold, Ink: Line, Align: Middle, Turn: math.Atan2(dir.Y, dir.X), Knock: true})
+}
+
+// levelText stands beside an upright line that is too short for it.
+func (d *Drawing) levelText(mid Pt, m Dimension) Rect {
+	st := Style{Size: m.Size, Bold: m.Bold, Ink: Line, Knock: true}
+	at := Pt{mid.X + 8, mid.Y + CapHeight*m.Size/2}
+	text := m.Text
+	if m.Left {
+		at.X, st.Align = mid.X-8, End
+		if m.Brief != "" {
+			text = m.Brief
+		}
+	}
+	return d.Text(at, text, st)
 }
 
 // BreakLine draws the long thin zigzag of ISO 128 across a view from a to b:

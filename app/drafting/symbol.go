@@ -87,3 +87,22 @@ func (d *Drawing) Spot(c Pt, r float64, ink Ink) {
 	d.Fill(Circle(c, r), ink)
 	d.Stroke(Circle(c, r+3), Medium, ink)
 }
+
+// Keypad draws a keypad: nine squares.
+func (d *Drawing) Keypad(c Pt, side float64, ink Ink) {
+	k := side * 0.11
+	for i := range 9 {
+		x, y := c.X+float64(i%3-1)*side*0.34, c.Y+float64(i/3-1)*side*0.34
+		d.Fill(Box(Rect{x - k, y - k, x + k, y + k}), ink)
+	}
+}
+
+// Ruler draws a rule with ticks.
+func (d *Drawing) Ruler(c Pt, side float64, ink Ink) {
+	h := side / 2
+	d.Frame(Rect{c.X - h*1.2, c.Y - h*0.6, c.X + h*1.2, c.Y + h*0.6}, Medium, ink)
+	for i := range 5 {
+		x := c.X + float64(i-2)*h*0.4
+		d.Line(Pt{x, c.Y - h*0.6}, Pt{x, c.Y - h*0.6 + h*(0.45+0.35*float64((i+1)%2))}, Medium, ink)
+	}
+}

@@ -28,9 +28,9 @@ func (u *UI) shotCells(stamps bool) []cell {
 }
 
 func (u *UI) timeCell() cell {
-	c := cell{caption: "Exposure time", big: true, span: 2}
+	c := cell{caption: "Exposure time", big: true, span: 2, panel: desk.Panel{Kind: desk.WorkingPanel}}
 	if u.s.Fault != "" {
-		c.value, c.note, c.big = "no answer", u.s.Fault, false
+		c.value, c.note, c.big, c.panel = "no answer", u.s.Fault, false, desk.Panel{}
 		return c
 	}
 	e := u.s.Answer.Exposure
@@ -44,14 +44,18 @@ func (u *UI) timeCell() cell {
 // ropeCell is the outermost boundary of all limits, in both units, with the
 // limit that decides.
 func (u *UI) ropeCell() cell {
-	c := cell{caption: "Barricade at least", rope: true, span: 2}
+	c := cell{caption: "Barricade at least", rope: true, span: 2, panel: desk.Panel{Kind: desk.WorkingPanel, Field: "boundary"}}
 	w, ok := u.s.Answer.Worst()
 	if !ok {
-		c.value, c.note = "no limit set", "without a limit there is no boundary"
+		c.value, c.note, c.panel = "no limit set", "without a limit there is no boundary", desk.Panel{}
 		return c
 	}
-	c.value = desk.SI.Outward(w.Metres) + " / " + desk.Customary.Outward(w.Metres)
-	c.note = directionWord(w.Direction) + ", " + u.limitText(w.Limit) + "; a calibrated survey meter decides"
+	first, second := desk.SI, desk.Customary
+	if u.s.Units == desk.Customary {
+		first, second = second, first
+	}
+	c.value, c.big = first.Outward(w.Metres), true
+	c.note = second.Outward(w.Metres) + "; " + directionWord(w.Direction) + ", " + u.limitText(w.Limit) + "; a calibrated survey meter decides"
 	if w.Within {
 		c.value = "within " + c.value
 	}

@@ -9,18 +9,21 @@ import (
 	"halfvalue/app/touch"
 )
 
-// panelHeight is how high the open panel wants to be in a width.
-func (u *UI) panelHeight(width float64) float64 {
+// panelHeight is how high the open panel wants to be in a width, where it may
+// have at most a height. The strip gives way before the dial does.
+func (u *UI) panelHeight(width, most float64) float64 {
 	pad := 2.0 * touch.Unit
 	switch u.s.Panel.Kind {
 	case desk.DialPanel:
 		h := u.dial.Height(&u.bench)
-		if !u.besides(width) && !u.dial.Keypad {
-			h += u.stripHeight() + touch.Unit
+		if full := h + u.stripHeight() + touch.Unit; !u.besides(width) && !u.dial.Keypad && full+pad <= most {
+			h = full
 		}
 		return h + pad
 	case desk.LogPanel:
-		return u.logHeight(width) + pad
+		return u.logHeight() + pad
+	case desk.LookPanel:
+		return u.lookHeight(width) + pad
 	case desk.CheckPanel:
 		return 300*u.look.Text + pad
 	}
@@ -51,9 +54,11 @@ func (u *UI) panelIn(r drafting.Rect) {
 	case desk.CheckPanel:
 		u.checkPanel(rest)
 	case desk.WorkingPanel:
-		u.workingPanel(rest, "Working", u.s.Answer.Working)
+		u.workingPanel(rest)
 	case desk.LogPanel:
 		u.logPanel(rest)
+	case desk.LookPanel:
+		u.lookPanel(rest)
 	}
 }
 
@@ -74,8 +79,7 @@ func (u *UI) dialPanel(rest, in drafting.Rect) {
 	}
 	dial, strip := in.CutTop(u.dial.Height(&u.bench))
 	u.dial.Layout(&u.bench, dial, notch, u.dialSpec(q))
-	if !u.dial.Keypad {
-		_, strip = strip.CutTop(touch.Unit)
+	if _, strip = strip.CutTop(touch.Unit); strip.H() >= 70+3*u.look.Small() {
 		u.tradeOff(strip, q)
 	}
 }
@@ -88,6 +92,7 @@ func (u *UI) dialSpec(q desk.Quantity) touch.DialSpec {
 		Usual:  q.UsualIn(units),
 		Figure: func(v float64) string { f, _ := units.In(q.Kind, v); return desk.Significant(f, 4) },
 		Units:  desk.TypedUnits(q.Kind, units),
+		Unit:   units.Base(q.Kind, 1),
 		Set:    func(v float64, more bool) { u.emit(desk.Set{Field: q.Field, To: v, More: more}) },
 		Typed:  func(text string) { u.emit(desk.Type{Field: q.Field, Text: text}) },
 		Close:  func() { u.emit(desk.Close{}) },
@@ -110,18 +115,19 @@ func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
 		return
 	}
 	units := u.s.Units
+	in := func(v float64) float64 { f, _ := units.In(q.Kind, v); return f }
 	points := make([]touch.StripPoint, len(c.Points))
 	for i, p := range c.Points {
-		points[i] = touch.StripPoint{X: p.X, Y: p.Seconds, Short: p.Short, Gap: p.Refused}
+		points[i] = touch.StripPoint{X: in(p.X), Y: p.Seconds, Short: p.Short, Gap: p.Refused}
 	}
 	u.strip.Layout(&u.bench, r, touch.StripSpec{
-		Field: q.Field, Label: q.Label(), Points: points, Lo: c.From, Hi: c.To, Log: q.Log,
-		Now:     touch.StripPoint{X: q.Value, Y: u.s.Answer.Exposure.Seconds},
+		Field: q.Field, Label: q.Label(), Points: points, Lo: in(c.From), Hi: in(c.To), Log: q.Log,
+		Now:     touch.StripPoint{X: in(q.Value), Y: u.s.Answer.Exposure.Seconds},
 		XTitle:  strings.TrimSuffix(q.Symbol+", "+unitName(units, q.Kind), ", "),
-		XFigure: func(v float64) string { f, _ := units.In(q.Kind, v); return desk.Significant(f, 3) },
+		XFigure: func(v float64) string { return desk.Significant(v, 3) },
 		YFigure: shortClock,
 		Read: func(p touch.StripPoint) string {
-			t := q.Symbol + " " + units.Format(q.Kind, p.X, 3) + ": " + desk.Clock(p.Y)
+			t := q.Symbol + " " + units.Format(q.Kind, units.Base(q.Kind, p.X), 3) + ": " + desk.Clock(p.Y)
 			if p.Short {
 				t += ", a rule falls short"
 			}

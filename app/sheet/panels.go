@@ -148,10 +148,36 @@ func (u *UI) checkPanel(r drafting.Rect) {
 	}
 }
 
-// workingPanel lists the steps behind every number.
-func (u *UI) workingPanel(r drafting.Rect, title string, steps []working.Step) {
+// workingPanel lists the steps behind every number, or behind those whose
+// names begin as the panel says.
+func (u *UI) workingPanel(r drafting.Rect) {
+	title, steps := "Working", u.s.Answer.Working
+	if of := u.s.Panel.Field; of != "" {
+		title, steps = "Working of the "+of, nil
+		for _, s := range u.s.Answer.Working {
+			if strings.HasPrefix(s.ID, of+".") {
+				steps = append(steps, s)
+			}
+		}
+	}
 	r = u.heading(r, title)
-	u.steps("Working", r, steps)
+	if t := u.spreadText(); u.s.Panel.Field == "" && t != "" {
+		h := u.bench.Paragraph(r, t, u.look.Caption())
+		_, r = r.CutTop(h + touch.Unit)
+	}
+	u.steps("Working steps", r, steps)
+}
+
+// spreadText names what the spread of the time comes from, largest first.
+func (u *UI) spreadText() string {
+	var parts []string
+	for _, s := range u.s.Answer.Spread {
+		parts = append(parts, s.Name+" "+desk.Significant(100*s.Relative, 2)+" %")
+	}
+	if len(parts) == 0 {
+		return ""
+	}
+	return "Spread of the time, one standard deviation each: " + strings.Join(parts[:min(4, len(parts))], ", ")
 }
 
 func (u *UI) steps(key string, r drafting.Rect, steps []working.Step) {
@@ -187,7 +213,7 @@ func (u *UI) step1(r drafting.Rect, s working.Step, draw bool) float64 {
 		}
 		y += b.Height(r.W(), text, st)
 	}
-	put(s.Name+":  "+s.Symbol+" = "+desk.Significant(s.Value, 5)+" "+s.Unit, u.look.Strong())
+	put(s.Name+":  "+s.Symbol+" = "+strings.TrimSpace(desk.Significant(s.Value, 5)+" "+unitText(s.Unit)), u.look.Strong())
 	put(s.Formula, u.look.Plain())
 	put(inputsText(s.Inputs), u.look.Caption())
 	put(sourceText(s), u.look.Caption())
@@ -205,9 +231,17 @@ func inputsText(inputs []working.Input) string {
 		if v == "" {
 			v = desk.Significant(i.Value, 5)
 		}
-		parts = append(parts, strings.TrimSpace(i.Symbol+" = "+v+" "+i.Unit))
+		parts = append(parts, strings.TrimSpace(i.Symbol+" = "+v+" "+unitText(i.Unit)))
 	}
 	return strings.Join(parts, ",  ")
+}
+
+// unitText writes a unit as people read it.
+func unitText(unit string) string {
+	if unit == "1" {
+		return ""
+	}
+	return strings.NewReplacer("uSv", "µSv", "uGy", "µGy", "um", "µm", "cm2", "cm²", "cm3", "cm³").Replace(unit)
 }
 
 func sourceText(s working.Step) string {
@@ -224,19 +258,17 @@ func sourceText(s working.Step) string {
 	return out
 }
 
-// lookPanel chooses units, light, text size and gloves.
-func (u *UI) lookPanel(r drafting.Rect) {
-	b := &u.bench
-	b.Frame(r, drafting.Bold, drafting.Line)
-	in := r.Inset(2 * touch.Unit)
-	type row struct {
-		name    string
-		options []touch.Button
-	}
+// lookRow is one thing of the look with the buttons to choose it.
+type lookRow struct {
+	name    string
+	options []touch.Button
+}
+
+func (u *UI) lookRows() []lookRow {
 	pick := func(label string, on bool, in desk.Intent) touch.Button {
 		return touch.Button{Label: label, Selected: on, Do: u.do(in)}
 	}
-	rows := []row{
+	rows := []lookRow{
 		{"Light", []touch.Button{
 			pick("Paper", u.s.Light == desk.Paper, desk.SetLight{To: desk.Paper}),
 			pick("Slate", u.s.Light == desk.Slate, desk.SetLight{To: desk.Slate}),
@@ -247,7 +279,7 @@ func (u *UI) lookPanel(r drafting.Rect) {
 			pick("in, Ci, mrem", u.s.Units == desk.Customary, desk.SetUnits{To: desk.Customary}),
 		}},
 		{"Text", nil},
-		{"Gloves", []touch.Button{
+		{"Targets", []touch.Button{
 			pick("Bare hands", !u.s.Gloves, desk.SetGloves{On: false}),
 			pick("Gloves", u.s.Gloves, desk.SetGloves{On: true}),
 		}},
@@ -255,54 +287,85 @@ func (u *UI) lookPanel(r drafting.Rect) {
 	for _, p := range []int{100, 130, 160, 200} {
 		rows[2].options = append(rows[2].options, pick(fmt.Sprintf("%d %%", p), u.s.Text == p, desk.SetText{Percent: p}))
 	}
-	each := u.look.Target + u.look.Small()*1.5 + 2*touch.Unit
-	b.Scroll("Look", in, each*float64(len(rows)), func(in drafting.Rect) {
+	return rows
+}
+
+// lookEach is the height of one row of the look panel.
+func (u *UI) lookEach() float64 { return u.look.Target + u.look.Small()*1.5 + touch.Unit }
+
+func lookColumns(width float64) int {
+	if width >= 680 {
+		return 2
+	}
+	return 1
+}
+
+func (u *UI) lookHeight(width float64) float64 {
+	return u.lookEach()*float64(4/lookColumns(width)) + 2*drafting.Bold + 1
+}
+
+// lookPanel chooses units, light, text size and gloves.
+func (u *UI) lookPanel(r drafting.Rect) {
+	rows := u.lookRows()
+	n := lookColumns(r.W() + u.look.Target + 3*touch.Unit)
+	each := u.lookEach()
+	u.bench.Scroll("Look panel", r, each*float64(len(rows)/n), func(in drafting.Rect) {
+		columns := in.Columns(n, 2*touch.Unit)
 		for i, row := range rows {
-			y := in.Y0 + float64(i)*each
-			b.Text(drafting.Pt{X: in.X0, Y: y + drafting.Ascent*u.look.Small()}, row.name, u.look.Caption())
-			cells := drafting.Rect{X0: in.X0, Y0: y + u.look.Small()*1.5, X1: math.Min(in.X1, in.X0+720), Y1: y + u.look.Small()*1.5 + u.look.Target}.Columns(len(row.options), touch.Unit)
-			for k, o := range row.options {
-				o.Box = cells[k]
-				b.Button(o)
-			}
+			c := columns[i%n]
+			u.lookRow(drafting.Rect{X0: c.X0, X1: c.X1, Y0: c.Y0 + float64(i/n)*each}, row)
 		}
 	})
 }
 
+func (u *UI) lookRow(r drafting.Rect, row lookRow) {
+	b := &u.bench
+	b.Text(drafting.Pt{X: r.X0, Y: r.Y0 + drafting.Ascent*u.look.Small()}, row.name, u.look.Caption())
+	y := r.Y0 + u.look.Small()*1.5
+	for k, box := range (drafting.Rect{X0: r.X0, Y0: y, X1: r.X1, Y1: y + u.look.Target}).Columns(len(row.options), touch.Unit) {
+		o := row.options[k]
+		o.Box = box
+		b.Button(o)
+	}
+}
+
 // logHeight is what the log panel needs.
-func (u *UI) logHeight(width float64) float64 {
+func (u *UI) logHeight() float64 {
 	return u.look.Body()*1.5 + 4*(u.look.Target+touch.Unit) + u.look.Small()*3 + touch.Unit
 }
 
 // logPanel asks who logs the shot and what was given.
 func (u *UI) logPanel(r drafting.Rect) {
-	b := &u.bench
 	r = u.heading(r, "Log this shot")
-	who, r := r.CutTop(u.look.Target)
-	people := u.s.People[:min(len(u.s.People), max(1, int(who.W()/(120*u.look.Text))))]
-	if len(people) > 0 {
-		cells := who.Columns(len(people), touch.Unit)
-		for i, p := range people {
-			b.Button(touch.Button{Box: cells[i], Label: "By " + p, Text: b.Fit(p, cells[i].W()-2*touch.Unit, u.look.Strong()), Selected: u.who == p && u.name.Len() == 0,
-				Do: func() { u.who = p; u.name.SetText("") }})
+	row, small := u.look.Target+touch.Unit, u.look.Small()
+	u.bench.Scroll("Log panel", r, 4*row+small*1.5, func(in drafting.Rect) {
+		at := func(y float64) drafting.Rect {
+			return drafting.Rect{X0: in.X0, Y0: in.Y0 + y, X1: in.X1, Y1: in.Y0 + y + u.look.Target}
 		}
-		_, r = r.CutTop(touch.Unit)
-	} else {
-		r.Y0 = who.Y0
+		u.peopleRow(at(0))
+		u.fieldAt(at(row), "Another name", &u.name)
+		u.bench.Text(drafting.Pt{X: in.X0, Y: in.Y0 + 2*row + drafting.Ascent*small}, "Time really given", u.look.Caption())
+		u.givenStepper(at(2*row + small*1.5))
+		by := u.logger()
+		u.bench.Button(touch.Button{Box: at(3*row + small*1.5), Label: "Append to the book", Strong: true, Off: by == "", Do: func() {
+			u.emit(desk.Log{By: by, GivenSeconds: u.given})
+		}})
+	})
+}
+
+// peopleRow offers who logged before.
+func (u *UI) peopleRow(r drafting.Rect) {
+	b := &u.bench
+	people := u.s.People[:min(len(u.s.People), max(1, int(r.W()/(120*u.look.Text))))]
+	if len(people) == 0 {
+		b.TextIn(r, "Nobody has logged here yet", u.look.Caption())
+		return
 	}
-	name, r := r.CutTop(u.look.Target)
-	u.fieldAt(name, "Another name", &u.name)
-	_, r = r.CutTop(touch.Unit)
-	b.Text(drafting.Pt{X: r.X0, Y: r.Y0 + drafting.Ascent*u.look.Small()}, "Time really given", u.look.Caption())
-	_, r = r.CutTop(u.look.Small() * 1.5)
-	given, r := r.CutTop(u.look.Target)
-	u.givenStepper(given)
-	_, r = r.CutTop(touch.Unit)
-	button, _ := r.CutTop(u.look.Target)
-	by := u.logger()
-	b.Button(touch.Button{Box: button, Label: "Append to the book", Strong: true, Off: by == "", Do: func() {
-		u.emit(desk.Log{By: by, GivenSeconds: u.given})
-	}})
+	for i, box := range r.Columns(len(people), touch.Unit) {
+		p := people[i]
+		b.Button(touch.Button{Box: box, Label: "By " + p, Text: b.Fit(p, box.W()-2*touch.Unit, u.look.Strong()), Selected: u.who == p && u.name.Len() == 0,
+			Do: func() { u.who = p; u.name.SetText("") }})
+	}
 }
 
 // logger is who logs: what was typed, else who was chosen.

@@ -41,14 +41,16 @@ func (u *UI) shotTall(in drafting.Rect) {
 	b := &u.bench
 	answer := u.answerHeight(in.W())
 	if u.s.Panel.Kind != desk.NoPanel {
-		need := u.panelHeight(in.W())
-		panel, rest := in.CutBottom(math.Min(need, in.H()*0.72))
+		most := in.H() - answer
+		height := math.Min(u.panelHeight(in.W(), most), most)
+		if most-height < u.headRoom()+u.footRoom()+math.Max(40, 2.6*u.look.Small()) {
+			height = most // too little is left for a drawing
+		}
+		panel, rest := in.CutBottom(height)
 		band, view := rest.CutBottom(answer)
 		u.panelIn(panel)
 		u.answerBand(band)
-		if view.H() > 120 {
-			u.drawing(view)
-		}
+		u.drawing(view)
 		return
 	}
 	view, rest := in.CutTop(in.H() * 0.5)
@@ -64,8 +66,7 @@ func (u *UI) shotTall(in drafting.Rect) {
 // panelBelow draws the open panel at the foot of a view and returns what is
 // left of it.
 func (u *UI) panelBelow(view drafting.Rect, most float64) drafting.Rect {
-	need := u.panelHeight(view.W())
-	panel, rest := view.CutBottom(math.Min(need, view.H()*most))
+	panel, rest := view.CutBottom(math.Min(u.panelHeight(view.W(), view.H()*most), view.H()*most))
 	u.panelIn(panel)
 	return rest
 }
@@ -137,12 +138,12 @@ func (u *UI) checkText(c desk.Check) string {
 func (u *UI) drawing(view drafting.Rect) {
 	side, section := view, drafting.Rect{}
 	width := math.Min(view.W()*0.46, 400*u.look.Text)
-	left, right := u.sideMargins()
+	left, right := u.sideMargins(view.H())
 	if view.W()-width >= left+right+64 && u.sectionFits(view.H(), width) {
 		section, side = view.CutRight(width)
 	}
 	u.room = side
-	u.sideView(side)
+	u.sideView(side, !section.Empty())
 	if !section.Empty() {
 		u.room = section
 		u.detailView(section)

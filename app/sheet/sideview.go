@@ -11,15 +11,14 @@ import (
 )
 
 // sideView draws source, beam, part and film to scale with their dimensions.
-// What is touched opens its dial.
-func (u *UI) sideView(r drafting.Rect) {
+// What is touched opens its dial. Marked, it shows where Section A is cut.
+func (u *UI) sideView(r drafting.Rect, marked bool) {
 	b := &u.bench
 	small := u.look.Small()
 	p := u.s.Filled
-	left, right := u.sideMargins()
-	head, foot := 62.0, small*2+22
-	view := drafting.Rect{X0: r.X0 + left, Y0: r.Y0 + head + small*1.3, X1: r.X1 - right, Y1: r.Y1 - foot}
-	if view.W() < 40 || view.H() < 60 {
+	left, right := u.sideMargins(r.H())
+	view := drafting.Rect{X0: r.X0 + left, Y0: r.Y0 + u.headRoom(), X1: r.X1 - right, Y1: r.Y1 - u.footRoom()}
+	if view.W() < 40 || view.H() < math.Max(40, 2.6*small) {
 		return
 	}
 	g := newSight(p, view)
@@ -29,15 +28,36 @@ func (u *UI) sideView(r drafting.Rect) {
 	u.sideFilm(g, p)
 	u.axis(g)
 	u.head(g, p, r)
+	if marked && g.surface-g.source > 40 {
+		u.mark(g)
+	}
 	b.Unclip()
 	u.sideDimensions(g, p, r, small)
 	u.title(r, "Side view", g.scale)
 }
 
+// headRoom and footRoom are what the side view leaves above the source and
+// below the film.
+func (u *UI) headRoom() float64 { return 62 + u.look.Small()*1.3 }
+
+func (u *UI) footRoom() float64 { return u.look.Small()*2 + 22 }
+
+// low says whether a view is too low for SFD to be written along its line.
+func (u *UI) low(height float64) bool {
+	room := height - u.headRoom() - u.footRoom() - 24
+	return room < u.bench.Fonts.Width(u.brief("SFD", u.s.Filled.Setup.SFDMM), u.look.Small(), true)
+}
+
 // sideMargins is the room for the dimensions left and right of the side view.
-func (u *UI) sideMargins() (left, right float64) {
+func (u *UI) sideMargins(height float64) (left, right float64) {
 	small := u.look.Small()
-	return small*2 + 26, 46 + u.bench.Fonts.Width(u.bText(), small, true)
+	text := u.bText()
+	if u.low(height) {
+		f := "f " + u.s.Units.Format(desk.Length, u.s.Filled.Setup.SFDMM-u.s.Filled.SpanMM(), 4)
+		right = 46 + math.Max(u.bench.Fonts.Width(text, small, true), u.bench.Fonts.Width(f, small, true))
+		return u.bench.Fonts.Width(u.brief("SFD", u.s.Filled.Setup.SFDMM), small, true) + 44, right
+	}
+	return small*2 + 26, 46 + u.bench.Fonts.Width(text, small, true)
 }
 
 // brief is a dimension without its unit, as drawings have it.
@@ -103,6 +123,15 @@ func (u *UI) beamPiece(g sight, p plan.Plan, y0, y1 float64) {
 	for _, side := range []float64{-1, 1} {
 		b.Line(drafting.Pt{X: g.cx + side*w0, Y: y0}, drafting.Pt{X: g.cx + side*w1, Y: y1}, drafting.Medium, drafting.Beam, drafting.Edge()...)
 	}
+}
+
+// mark draws the ends of the cut that Section A shows.
+func (u *UI) mark(g sight) {
+	b := &u.bench
+	st := drafting.Style{Size: u.look.Small(), Bold: true, Ink: drafting.Line}
+	b.Line(drafting.Pt{X: g.cx, Y: g.surface - 16}, drafting.Pt{X: g.cx, Y: g.surface - 3}, 3, drafting.Line)
+	b.Line(drafting.Pt{X: g.cx, Y: g.film + 9}, drafting.Pt{X: g.cx, Y: g.film + 20}, 3, drafting.Line)
+	b.Text(drafting.Pt{X: g.cx + 6, Y: g.surface - 5}, "A", st)
 }
 
 // axis draws the central ray and, where the distance is broken, the break.
@@ -279,12 +308,15 @@ func (u *UI) sideDimensions(g sight, p plan.Plan, r drafting.Rect, small float64
 	b := &u.bench
 	units := u.s.Units
 	x := r.X0 + small + 16
+	if u.low(r.H()) {
+		x = g.view.X0 - 20
+	}
 	ext := func(x0, y, x1 float64) {
 		b.Line(drafting.Pt{X: x0, Y: y}, drafting.Pt{X: x1, Y: y}, drafting.Hair, drafting.Faint)
 	}
 	ext(x-4, g.source, g.cx-42)
 	ext(x-4, g.film+2, g.view.X0+4)
-	sfd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: g.source}, B: drafting.Pt{X: x, Y: g.film + 2}, Text: "SFD " + units.Format(desk.Length, p.Setup.SFDMM, 4), Brief: u.brief("SFD", p.Setup.SFDMM), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut})
+	sfd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: x, Y: g.source}, B: drafting.Pt{X: x, Y: g.film + 2}, Text: "SFD " + units.Format(desk.Length, p.Setup.SFDMM, 4), Brief: u.brief("SFD", p.Setup.SFDMM), Size: small, Bold: true, Ink: drafting.Line, Break: g.cut, Left: true})
 	u.open(sfd.And(r), "setup.sfdMM", "")
 
 	xr := g.view.X1 + 22

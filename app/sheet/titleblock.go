@@ -166,7 +166,13 @@ func (u *UI) answerBand(r drafting.Rect) {
 
 func (u *UI) bandCells() []cell {
 	t, r := u.timeCell(), u.ropeCell()
-	t.big, r.note = false, ""
+	t.big, r.big = false, false
+	if w, ok := u.s.Answer.Worst(); ok {
+		r.value, r.note = desk.SI.Outward(w.Metres)+" / "+desk.Customary.Outward(w.Metres), ""
+	}
+	if u.look.Text > 1.2 && t.panel.Kind != desk.NoPanel {
+		t.note = ""
+	}
 	t.span, r.span = 1, 1
 	return []cell{t, r}
 }

@@ -55,7 +55,7 @@ func (u *UI) Layout(gtx layout.Context, s desk.State) []desk.Intent {
 	u.bench.End()
 	u.editors(gtx)
 	if !s.Curve.Whole && s.Curve.Field != "" {
-		u.emit(desk.Trace{Points: 4})
+		u.emit(desk.Trace{Points: 2})
 	}
 	if len(u.intents) > 0 {
 		gtx.Execute(op.InvalidateCmd{})
@@ -135,8 +135,14 @@ func (u *UI) draw() {
 	body = u.caution(body)
 	body = u.notices(body)
 	if u.s.Panel.Kind == desk.LookPanel {
-		u.lookPanel(body)
-		return
+		panel, rest := body.CutBottom(math.Min(u.panelHeight(body.W(), body.H()), body.H()*0.8))
+		u.bench.Frame(panel, drafting.Bold, drafting.Line)
+		u.panelIn(panel.Inset(drafting.Bold))
+		_, body = rest.CutBottom(touch.Unit)
+		u.s.Panel = desk.Panel{}
+		if body.H() < 240 {
+			return
+		}
 	}
 	switch u.s.Sheet {
 	case desk.BookSheet:

@@ -1,6 +1,8 @@
 package touch
 
 import (
+	"strings"
+
 	"halfvalue/app/drafting"
 )
 
@@ -82,6 +84,12 @@ func (b *Bench) buttonFace(t Button, text string, ink drafting.Ink) {
 
 // fitLines writes text centred in a box, on as many lines as it needs.
 func (b *Bench) fitLines(in drafting.Rect, text string, style drafting.Style) {
+	for _, word := range strings.Fields(text) {
+		if b.Fonts.Width(word, style.Size, style.Bold) > in.W() {
+			in, style.Size = in.Grow(Unit-2), b.Look.Small()
+			break
+		}
+	}
 	lines := b.Fonts.Wrap(text, style.Size, style.Bold, in.W())
 	step := style.Size * 1.2
 	y := in.Mid().Y - step*float64(len(lines)-1)/2

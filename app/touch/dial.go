@@ -30,6 +30,7 @@ type DialSpec struct {
 	Usual    []float64
 	Figure   func(v float64) string // figure on the scale, without its unit
 	Units    []string               // unit keys of the keypad
+	Unit     float64                // base units in one of those shown: graduations are whole in it
 	Set      func(v float64, more bool)
 	Typed    func(text string)
 	Close    func()
@@ -172,11 +173,11 @@ func (d *Dial) ruler(b *Bench, r drafting.Rect, s DialSpec) {
 }
 
 func (d *Dial) padButton(b *Bench, r drafting.Rect) {
-	label, text := "Keypad", "123"
+	label, symbol := "Keypad", b.Drawing.Keypad
 	if d.Keypad {
-		label, text = "Scale", "Scale"
+		label, symbol = "Scale", b.Ruler
 	}
-	b.Button(Button{Box: r, Label: label, Text: text, Do: func() { d.Keypad, d.typed = !d.Keypad, "" }})
+	b.Button(Button{Box: r, Label: label, Symbol: symbol, Do: func() { d.Keypad, d.typed = !d.Keypad, "" }})
 }
 
 func (d *Dial) scrub(_ *Bench, s DialSpec, g Drag) {
@@ -196,7 +197,12 @@ func (d *Dial) ticks(b *Bench, r drafting.Rect, x float64, s DialSpec) {
 	lo, hi := clamp(s.moved(s.Value, x-r.X0), s.Min, s.Max), clamp(s.moved(s.Value, x-r.X1), s.Min, s.Max)
 	a := drafting.Axis{Lo: lo, Hi: hi, From: s.place(x, lo), To: s.place(x, hi), Log: s.Log}
 	small := drafting.Style{Size: b.Look.Small(), Ink: drafting.Line, Align: drafting.Middle}
-	for _, v := range (drafting.Axis{Lo: lo, Hi: hi}).Ticks(40) {
+	unit := s.Unit
+	if unit <= 0 {
+		unit = 1
+	}
+	for _, v := range (drafting.Axis{Lo: lo / unit, Hi: hi / unit}).Ticks(40) {
+		v *= unit
 		b.Line(drafting.Pt{X: a.At(v), Y: r.Y0}, drafting.Pt{X: a.At(v), Y: r.Y0 + 8}, drafting.Hair, drafting.Faint)
 	}
 	last := math.Inf(-1)
@@ -256,7 +262,7 @@ func (d *Dial) actionKey(b *Bench, row int, cell drafting.Rect, s DialSpec) {
 		d.padButton(b, cell)
 	case 2:
 		cell.Y1 += cell.H() + 4
-		b.Button(Button{Box: cell, Label: "Set", Strong: d.typed != "", Off: d.typed == "", Do: func() { d.commit(s, d.typed) }})
+		b.Button(Button{Box: cell, Label: "Set", Symbol: b.Check, Strong: d.typed != "", Off: d.typed == "", Do: func() { d.commit(s, d.typed) }})
 	}
 }
 
