@@ -20,6 +20,9 @@ import (
 // book open.
 var ErrInUse = errors.New("the book is open elsewhere: close the other program that uses it, or work on a copy")
 
+// ErrDamaged is told when the file is there and is no sound book.
+var ErrDamaged = errors.New("the file is damaged or is no book")
+
 const schema = "halfvalue book 1"
 
 // The buckets.
@@ -119,6 +122,9 @@ func open(path string, readOnly bool) (*Book, error) {
 		if b.db != nil {
 			b.db.Close()
 		}
+		if !errors.Is(err, fs.ErrPermission) && !errors.Is(err, fs.ErrNotExist) {
+			err = fmt.Errorf("%w: %w", ErrDamaged, err)
+		}
 		return nil, fmt.Errorf("book %s cannot be opened: %w", filepath.Base(path), err)
 	}
 	openHere.paths[real] = true
@@ -149,7 +155,7 @@ func guard(f func() error) (err error) {
 	defer debug.SetPanicOnFault(debug.SetPanicOnFault(true))
 	defer func() {
 		if p := recover(); p != nil {
-			err = fmt.Errorf("the file is damaged: %v", p)
+			err = fmt.Errorf("%w: %v", ErrDamaged, p)
 		}
 	}()
 	return f()
