@@ -1,12 +1,15 @@
 package exposure
 
+import "halfvalue/exposure/rules"
+
 // Option changes how the engine reckons; a plan never does.
 type Option func(*engine)
 
 // engine is what the options set.
 type engine struct {
 	noAir bool
-	quick bool // exposure alone: no spread, boundary or working
+	rules *rules.Table // nil: ours
+	quick bool         // exposure alone: no spread, boundary or working
 }
 
 // WithoutAir leaves the air between source and film out.

@@ -6,6 +6,7 @@ import (
 
 	"halfvalue/exposure/beam"
 	"halfvalue/exposure/plan"
+	"halfvalue/exposure/setup"
 )
 
 // mostHours is the longest exposure that is answered: beyond, the setup is
@@ -20,7 +21,7 @@ func Reckon(p plan.Plan, cal Calibration, opts ...Option) (Reckoning, error) {
 	for _, o := range opts {
 		o(&e)
 	}
-	if err := p.Validate(); err != nil {
+	if err := p.ValidateFor(e.table().Names()); err != nil {
 		return Reckoning{}, err
 	}
 	factor, err := cal.factor()
@@ -32,7 +33,11 @@ func Reckon(p plan.Plan, cal Calibration, opts ...Option) (Reckoning, error) {
 	if err != nil {
 		return Reckoning{}, err
 	}
-	r := Reckoning{Defaults: defaults, Engine: EngineVersion, Checks: []Check{}, Density: []Spot{}, Cautions: Cautions(), Geometry: geometry(full)}
+	central, err := geometry(full)
+	if err != nil {
+		return Reckoning{}, err
+	}
+	r := Reckoning{Defaults: defaults, Engine: EngineVersion, Checks: []Check{}, Density: []Spot{}, Cautions: Cautions(), Geometry: central}
 	if err := s.expose(&r, factor); err != nil || e.quick {
 		return r, err
 	}
@@ -153,17 +158,10 @@ func (s *shot) state(r *Reckoning) {
 	r.Source = SourceState{ActivityGBq: s.strength, ActivityCi: s.strength / beam.GBqPerCi, Decay: s.decay}
 }
 
-// geometry is that of the central ray.
-func geometry(p plan.Plan) Geometry {
-	g := Geometry{SFDMM: p.Setup.SFDMM, BMM: p.Setup.BMM, FMM: p.Setup.SFDMM - p.Setup.BMM}
-	d := 0.0
-	if p.Source.Tube != nil {
-		d = p.Source.Tube.FocusMM
-	} else if p.Source.Sealed != nil {
-		d = p.Source.Sealed.SizeMM
-	}
-	g.UgMM = d * g.BMM / g.FMM
-	return g
+// geometry is that of the central ray, of what the setup images.
+func geometry(p plan.Plan) (Geometry, error) {
+	g, err := setup.Of(p)
+	return Geometry{SFDMM: g.SFDMM, FMM: g.FMM, BMM: g.BMM, UgMM: g.UgMM}, err
 }
 
 // Cautions are the words that stand on every reckoning, sheet and print.

@@ -176,7 +176,7 @@ func fillNumber(f *faults, v reflect.Value, n node, path string, row Field) {
 		return
 	}
 	x, err := strconv.ParseFloat(n.text, 64)
-	if err != nil || math.Signbit(x) || (x == 0 && row.Min > 0) {
+	if err != nil || (math.Signbit(x) && row.Min >= 0) || (x == 0 && row.Min > 0) {
 		f.bar(outOfRange(row, path, n.text, x))
 		return
 	}
@@ -192,7 +192,7 @@ func fillNumber(f *faults, v reflect.Value, n node, path string, row Field) {
 		v.SetInt(int64(x))
 		return
 	}
-	v.SetFloat(x)
+	v.SetFloat(x + 0) // no negative zero
 }
 
 // absurd tells of a number that nobody measured.
@@ -257,12 +257,41 @@ var kindWords = map[Kind]string{Number: "a number", Text: "text in quotes", Name
 
 // fieldNames gives the JSON names of a type by field index.
 func fieldNames(t reflect.Type) []string {
+	if names, ok := namesByType[t]; ok {
+		return names
+	}
+	return tagNames(t)
+}
+
+func tagNames(t reflect.Type) []string {
 	names := make([]string, t.NumField())
 	for i := range names {
 		names[i], _, _ = strings.Cut(t.Field(i).Tag.Get("json"), ",")
 	}
 	return names
 }
+
+// namesByType holds fieldNames of every type of a plan.
+var namesByType = func() map[reflect.Type][]string {
+	all := map[reflect.Type][]string{}
+	var walk func(t reflect.Type)
+	walk = func(t reflect.Type) {
+		switch t.Kind() {
+		case reflect.Pointer, reflect.Slice, reflect.Array:
+			walk(t.Elem())
+		case reflect.Struct:
+			if t == reflect.TypeFor[time.Time]() {
+				return
+			}
+			all[t] = tagNames(t)
+			for i := range t.NumField() {
+				walk(t.Field(i).Type)
+			}
+		}
+	}
+	walk(reflect.TypeFor[Plan]())
+	return all
+}()
 
 func join(path, name string) string {
 	if path == "" {

@@ -64,7 +64,7 @@ func (p Plan) Clone() Plan {
 		p.Part.Sections[i].Layers = copied(p.Part.Sections[i].Layers)
 	}
 	p.Detector = p.Detector.clone()
-	p.Site.Limits = copied(p.Site.Limits)
+	p.Site = p.Site.clone()
 	return p
 }
 

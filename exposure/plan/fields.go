@@ -62,8 +62,13 @@ func (f Field) Names() []string {
 	if f.Kind != Name {
 		return nil
 	}
+	return slices.Clone(f.names())
+}
+
+// names is Names without the copy.
+func (f Field) names() []string {
 	if strings.HasSuffix(f.Path, "material") {
-		return slices.Clone(materialNames())
+		return materialNames()
 	}
 	switch f.Path {
 	case "source.sealed.nuclide":
@@ -71,7 +76,7 @@ func (f Field) Names() []string {
 	case "rules":
 		return RuleSets()
 	}
-	return slices.Clone(fixedNames[f.Path])
+	return fixedNames[f.Path]
 }
 
 var fixedNames = map[string][]string{
@@ -83,6 +88,10 @@ var fixedNames = map[string][]string{
 	"setup.side":           Sides,
 	"detector.film.class":  Classes,
 	"site.limits[].per":    Periods,
+
+	"site.people[].role":         Roles,
+	"site.readings[].state":      States,
+	"site.readings[].collimator": Collimators,
 }
 
 // pattern turns part.layers[1].mm into part.layers[].mm.
@@ -90,21 +99,21 @@ func pattern(path string) string {
 	if !strings.Contains(path, "[") {
 		return path
 	}
-	var b strings.Builder
+	b := make([]byte, 0, len(path))
 	inside := false
-	for _, r := range path {
-		switch {
-		case r == '[':
-			inside = true
-			b.WriteRune(r)
-		case r == ']':
+	for i := range len(path) {
+		c := path[i]
+		if c == ']' {
 			inside = false
-			b.WriteRune(r)
-		case !inside:
-			b.WriteRune(r)
+		}
+		if !inside {
+			b = append(b, c)
+		}
+		if c == '[' {
+			inside = true
 		}
 	}
-	return b.String()
+	return string(b)
 }
 
 var byPath = func() map[string]int {

@@ -118,6 +118,20 @@ type Film struct {
 type Site struct {
 	Limits       []Limit `json:"limits,omitempty"`
 	ShotsPerHour float64 `json:"shotsPerHour,omitzero"` // default: not stated, the beam is on all hour
+
+	// What follows draws the site; see site.go.
+	Beam               Beam       `json:"beam,omitzero"`
+	LevelM             float64    `json:"levelM,omitzero"` // height of the plan view, 0.05 to 100 m; default the focus' own
+	PartWidthMM        float64    `json:"partWidthMM,omitzero"`
+	PartHeightMM       float64    `json:"partHeightMM,omitzero"`
+	Walls              []Wall     `json:"walls,omitempty"`
+	People             []Person   `json:"people,omitempty"`
+	Readings           []Reading  `json:"readings,omitempty"`
+	FarOffFactor       float64    `json:"farOffFactor,omitzero"`
+	Container          *Container `json:"container,omitempty"`
+	AveragingAllowedBy string     `json:"averagingAllowedBy,omitzero"`
+	AirKgPerM3         float64    `json:"airKgPerM3,omitzero"`
+	Calls              []Call     `json:"calls,omitempty"`
 }
 
 // Limit is one criterion for the rope: either a rate with the meter's

@@ -29,7 +29,9 @@ func ranges(f *faults, v reflect.Value, path string, ruleSets []string) {
 		}
 	case reflect.Struct:
 		for i, name := range fieldNames(v.Type()) {
-			ranges(f, v.Field(i), join(path, name), ruleSets)
+			if field := v.Field(i); !(absent(field) && optional(path, name)) {
+				ranges(f, field, join(path, name), ruleSets)
+			}
 		}
 	case reflect.Slice, reflect.Array:
 		n := v.Len()
@@ -90,12 +92,12 @@ func unseen(r rune) bool {
 }
 
 func checkName(f *faults, s, path string, row Field, ruleSets []string) {
-	list := row.Names()
+	list := row.names()
+	if known(s, list) || row.Path == "rules" && known(s, ruleSets) {
+		return
+	}
 	if row.Path == "rules" {
 		list = slices.Concat(list, ruleSets)
-	}
-	if known(s, list) {
-		return
 	}
 	e := FieldError{Field: path, Value: s, Problem: "is unknown", Allowed: oneOf(list)}
 	near := ""
@@ -181,4 +183,22 @@ func quantity(x float64, unit string) string {
 		return format(x)
 	}
 	return format(x) + " " + unit
+}
+
+// absent tells whether nothing stands in a field; a negative zero is something.
+func absent(v reflect.Value) bool {
+	switch v.Kind() {
+	case reflect.Float64:
+		return v.Float() == 0 && !math.Signbit(v.Float())
+	case reflect.Struct, reflect.Array:
+		return false
+	}
+	return v.IsZero()
+}
+
+// optional tells whether a field may be left out, so that nothing in it is no
+// fault.
+func optional(path, name string) bool {
+	row, ok := FieldAt(join(path, name))
+	return ok && !row.Required
 }

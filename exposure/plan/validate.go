@@ -33,6 +33,7 @@ func (p Plan) validate(f *faults, ruleSets []string) {
 	p.validateSetup(f)
 	p.Detector.validate(f)
 	p.Site.validate(f)
+	p.validateSitePlan(f)
 }
 
 func (s Source) validate(f *faults) {

@@ -83,6 +83,15 @@ func (s Set) mends(p plan.Plan, id string, facts FactsFunc, most int) []Mend {
 	return list
 }
 
+// ReadsImage tells whether the check goes by the readings of the sections,
+// which only the engine knows for a changed plan; the other checks are served
+// by FactsOf.
+func (s Set) ReadsImage(id string) bool {
+	return slices.ContainsFunc(s.Rows, func(r Row) bool {
+		return r.ID == id && (r.Density != nil || r.Spread != nil || r.SNR != nil)
+	})
+}
+
 // Broken names the checks that fall short after a change and did not before.
 func (s Set) Broken(before, after Facts) []string {
 	was := map[string]Verdict{}

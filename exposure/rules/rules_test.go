@@ -244,18 +244,23 @@ func TestCompanyTableRefused(t *testing.T) {
 	}
 }
 
+var demo = plan.Demo()
+
+// night is a time that a source of the demo job is assayed before.
+var night = plan.Demos()[5].At
+
 // randomPlan is a valid plan over all setups, sources and detectors.
 func randomPlan(rng *rand.Rand) plan.Plan {
 	between := func(a, b float64) float64 { return math.Round((a+(b-a)*rng.Float64())*100) / 100 }
 	pick := func(list []string) string { return list[rng.IntN(len(list))] }
 	for {
-		p := plan.Demo()
+		p := demo.Clone()
 		p.Rules, p.Site = "house", plan.Site{}
 		if rng.IntN(2) == 0 {
 			p.Source.Tube = &plan.Tube{KV: between(60, 450), MA: 5, FocusMM: between(0.4, 6)}
 		} else {
-			p.Source = plan.Source{Sealed: &plan.Sealed{Nuclide: pick(plan.Nuclides()), ActivityGBq: 1000, Assayed: plan.Demos()[5].At, SizeMM: between(0.5, 6)}}
-			p.At = plan.Demos()[5].At
+			p.Source = plan.Source{Sealed: &plan.Sealed{Nuclide: pick(plan.Nuclides()), ActivityGBq: 1000, Assayed: night, SizeMM: between(0.5, 6)}}
+			p.At = night
 		}
 		wall := between(1, 60)
 		p.Part = plan.Part{Layers: []plan.Layer{{Material: pick([]string{"carbon-steel", "carbon-steel", "al-6082", "Ti", "copper", "zr-702"}), MM: wall}}}
