@@ -9,7 +9,7 @@ cd "$root"
 
 # Everything but package main and the pictures needs neither C nor a display,
 # so it is built and tested without them; that is also the quicker build.
-pure() { CGO_ENABLED=0 go list ./... | grep -v '^halfvalue/app$'; }
+pure() { CGO_ENABLED=0 go list -e ./... | grep -v '^halfvalue/app$'; }
 
 suite() {
 	# shellcheck disable=SC2086
@@ -28,7 +28,7 @@ suite() {
 
 # packages lists what is no program of its own: a second program cannot be
 # linked for a telephone without C.
-packages() { CGO_ENABLED=0 go list -f '{{if ne .Name "main"}}{{.ImportPath}}{{end}}' ./...; }
+packages() { CGO_ENABLED=0 go list -e -f '{{if ne .Name "main"}}{{.ImportPath}}{{end}}' ./...; }
 
 cross() {
 	local a p
