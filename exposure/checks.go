@@ -6,6 +6,7 @@ import (
 
 	"halfvalue/exposure/plan"
 	"halfvalue/exposure/rules"
+	"halfvalue/exposure/setup"
 	"halfvalue/exposure/working"
 )
 
@@ -36,6 +37,7 @@ func (s *shot) check(r *Reckoning) error {
 		return err
 	}
 	read(&facts, r)
+	facts.TravelShare = travelShare(s.plan, r.Exposure.Seconds)
 	see := seer{engine: s.engine}
 	for _, c := range set.Apply(facts) {
 		check := Check{ID: c.ID, Verdict: Verdict(c.Verdict), Value: c.Value, Limit: c.Limit, Unit: c.Unit, Title: c.Title, Text: c.Text, Source: c.Source()}
@@ -45,8 +47,8 @@ func (s *shot) check(r *Reckoning) error {
 			}
 		}
 		r.Checks = append(r.Checks, check)
-		r.Workings = append(r.Workings, working.Step{ID: "check." + c.ID, Name: c.Title, Formula: c.Text, Value: c.Value, Unit: c.Unit, Source: c.Source(),
-			Inputs: []working.Input{{Symbol: "limit", Name: string(c.Verdict), Value: c.Limit, Unit: c.Unit}}})
+		r.Workings = append(r.Workings, working.Step{ID: "check." + c.ID, Name: c.Title, Formula: c.Rule, Value: c.Value, Unit: c.Unit, Source: c.Source(),
+			Note: string(c.Verdict) + ": " + c.Text, Inputs: []working.Input{{Symbol: "limit", Name: "limit", Value: c.Limit, Unit: c.Unit, Source: c.Source()}}})
 	}
 	return nil
 }
@@ -62,6 +64,20 @@ func read(f *rules.Facts, r *Reckoning) {
 	}
 }
 
+// travelShare is the time that a sealed source spends in its guide tube over the
+// exposure time; 0, unknown, without a container in the site plan.
+func travelShare(p plan.Plan, seconds float64) float64 {
+	c := p.Site.WithDefaults().Container
+	if c == nil || p.Source.Sealed == nil {
+		return 0
+	}
+	share, err := setup.TravelShare(c.TubeM*1000, c.SpeedMPerS*1000, seconds)
+	if err != nil {
+		return 0
+	}
+	return share
+}
+
 // seer gives the facts of changed plans. It keeps what arrives at the detector
 // while only what the detector is to read changes.
 type seer struct {
@@ -71,10 +87,10 @@ type seer struct {
 	fields []field // the part, then its sections
 }
 
-// by gives the facts that a check goes by: with the readings of the sections
-// only where it asks for them, since those take the physics.
+// by gives the facts that a check goes by: with readings and times only where it
+// asks for them, since those take the physics.
 func (v *seer) by(set rules.Set, id string) rules.FactsFunc {
-	if set.ReadsImage(id) {
+	if set.NeedsEngine(id) {
 		return v.facts
 	}
 	return rules.FactsOf
@@ -104,6 +120,9 @@ func (v *seer) facts(p plan.Plan) (rules.Facts, error) {
 		s.spot(&r, section.Name, v.fields[i+1], seconds)
 	}
 	read(&f, &r)
+	if given, ok := s.seconds(seconds); ok {
+		f.TravelShare = travelShare(full, given)
+	}
 	return f, nil
 }
 

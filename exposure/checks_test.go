@@ -86,6 +86,36 @@ func TestDensityMend(t *testing.T) {
 	}
 }
 
+// TestTravelMend: a long guide tube before a short exposure.
+func TestTravelMend(t *testing.T) {
+	p := plan.Demos()[3]
+	if p.Source.Sealed == nil {
+		t.Fatal("the plan has no sealed source")
+	}
+	r, err := Reckon(p, Calibration{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if c := checkOf(t, r, "travel"); c.Verdict != Undecided {
+		t.Errorf("without a container: %+v", c)
+	}
+	p.Site.Container = &plan.Container{XM: 1, TubeM: 7, SpeedMPerS: 0.5}
+	if r, err = Reckon(p, Calibration{}); err != nil {
+		t.Fatal(err)
+	}
+	c := checkOf(t, r, "travel")
+	if want := 100 * 2 * 7 / 0.5 / r.Exposure.Seconds; c.Verdict != Short || c.Value < want*0.999 || c.Value > want*1.001 || c.Mend == nil || c.Mend.Field != "setup.sfdMM" {
+		t.Fatalf("%+v, want %v %%, mend %+v", c, want, c.Mend)
+	}
+	cost, err := MendCost(p, *c.Mend, Calibration{})
+	if err != nil || !(cost.Seconds > r.Exposure.Seconds) {
+		t.Fatalf("%+v, %v", cost, err)
+	}
+	if after, err := Reckon(cost.Plan, Calibration{}); err != nil || checkOf(t, after, "travel").Verdict != Holds {
+		t.Errorf("mended: %+v, %v", checkOf(t, after, "travel"), err)
+	}
+}
+
 func TestCompanyRules(t *testing.T) {
 	over, err := rules.Ours().Over("kestrel.json", []byte(`{"document": "Kestrel Ford 7", "note": "ours", "sets": [{"name": "kestrel/1", "title": "Kestrel Ford", "base": "house", "rows": [
 		{"id": "density", "title": "density", "text": "darker than the house asks", "clause": "4", "confidence": "company", "density": {"floor": 2.6, "ceiling": 4}}]}]}`))

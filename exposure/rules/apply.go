@@ -1,9 +1,6 @@
 package rules
 
-import (
-	"fmt"
-	"strings"
-)
+import "fmt"
 
 // Verdict of a check.
 type Verdict string
@@ -23,17 +20,21 @@ type Check struct {
 	Value      float64
 	Limit      float64
 	Unit       string
-	Text       string // the finding in a sentence, then what the rule asks
+	Text       string // the finding in a sentence
+	Rule       string // what the rule asks, in our own words, with what may be agreed on
 	Clause     string // "ISO 17636-1:2013, 7.6"
 	Confidence string // one of Confidences
 	From       string // company file; "" for ours
-	Mend       *Mend  // set by Mends' caller; nil where it holds or nothing helps
 }
 
-// Source cites the check for a working: document, clause, confidence, and the
-// company's file where the row came from one.
+// Source cites the check for a working: document, clause, confidence, that the
+// edition in force is to be looked at, and the company's file where the row came
+// from one.
 func (c Check) Source() string {
 	s := c.Clause + "; " + Confidences[c.Confidence]
+	if c.Confidence != "seen" && c.Confidence != "company" {
+		s += "; " + edition
+	}
 	if c.From != "" {
 		s += "; company table " + c.From
 	}
@@ -94,20 +95,15 @@ func noFamily(f Facts) string {
 }
 
 func (r Row) finish(j judgement) Check {
-	c := Check{ID: r.ID, Title: r.Title, Verdict: j.verdict, Value: j.value, Limit: j.limit, Unit: j.unit, Clause: r.Document + ", " + r.Clause, Confidence: r.Confidence, From: r.From}
-	parts := []string{j.text, r.Text}
+	c := Check{ID: r.ID, Title: r.Title, Verdict: j.verdict, Value: j.value, Limit: j.limit, Unit: j.unit, Text: j.text, Rule: r.Text, Clause: r.Document + ", " + r.Clause, Confidence: r.Confidence, From: r.From}
 	switch {
-	case r.Confidence == "low" && j.verdict != Undecided:
+	case r.Confidence == "low":
 		c.Verdict = Undecided
-		parts = append(parts, "guidance only, the figure is of low confidence")
+		c.Text += "; guidance only, the figure is of low confidence"
 	case r.Guidance && j.verdict == Short:
 		c.Verdict = Undecided
-		parts = append(parts, "a recommendation, not met")
+		c.Text += "; a recommendation, not met"
 	}
-	if r.Confidence != "seen" && r.Confidence != "company" {
-		parts = append(parts, edition)
-	}
-	c.Text = strings.Join(parts, "; ")
 	return c
 }
 
@@ -127,6 +123,14 @@ func atLeast(v, limit float64) Verdict {
 		return Holds
 	}
 	return Short
+}
+
+// extent writes a range, or one figure where both ends are the same.
+func extent(a, b float64, format string) string {
+	if say(format, a) == say(format, b) {
+		return say(format, a)
+	}
+	return say(format, a) + " to " + say(format, b)
 }
 
 func say(format string, args ...any) string { return fmt.Sprintf(format, args...) }

@@ -65,7 +65,7 @@ func (d densityRule) judge(f Facts) judgement {
 	at, limit, v := d.worst(f.Density)
 	j := judgement{verdict: v, value: at.Value, limit: limit, text: say("density %.2f at %q, %s", at.Value, at.At, d.said())}
 	if v == Holds {
-		j.text = say("density %.2f to %.2f, %s", least(f.Density), most(f.Density), d.said())
+		j.text = say("density %s, %s", extent(least(f.Density), most(f.Density), "%.2f"), d.said())
 	}
 	return j
 }

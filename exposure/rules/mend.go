@@ -83,12 +83,12 @@ func (s Set) mends(p plan.Plan, id string, facts FactsFunc, most int) []Mend {
 	return list
 }
 
-// ReadsImage tells whether the check goes by the readings of the sections,
-// which only the engine knows for a changed plan; the other checks are served
-// by FactsOf.
-func (s Set) ReadsImage(id string) bool {
+// NeedsEngine tells whether the check goes by the readings of the sections or
+// by the exposure time, which only the engine knows for a changed plan; the
+// other checks are served by FactsOf.
+func (s Set) NeedsEngine(id string) bool {
 	return slices.ContainsFunc(s.Rows, func(r Row) bool {
-		return r.ID == id && (r.Density != nil || r.Spread != nil || r.SNR != nil)
+		return r.ID == id && (r.Density != nil || r.Spread != nil || r.SNR != nil || r.Travel != nil)
 	})
 }
 

@@ -85,7 +85,7 @@ func (w Wires) judge(f Facts) judgement {
 	if f.Wire == 0 {
 		j.verdict, j.text = Undecided, say("W%d (%g mm) must show, %s, at %g mm: no film has been read", need, WireMM(need), side, t)
 	}
-	if w.Relaxation != "" && f.Nuclide != "" {
+	if single := f.Setup.Kind == plan.SingleWall || f.Setup.Kind == plan.Panoramic; w.Relaxation != "" && f.Nuclide == "Ir-192" && single {
 		j.text += "; " + w.Relaxation
 	}
 	return j

@@ -95,10 +95,10 @@ func TestLowConfidenceDecidesNothing(t *testing.T) {
 						t.Fatalf("%s: a low confidence decides: %+v", name, c)
 					}
 				}
-				if math.IsNaN(c.Value) || math.IsInf(c.Value, 0) || math.IsNaN(c.Limit) || math.IsInf(c.Limit, 0) || c.Text == "" || c.Source() == "" {
+				if math.IsNaN(c.Value) || math.IsInf(c.Value, 0) || math.IsNaN(c.Limit) || math.IsInf(c.Limit, 0) || c.Text == "" || c.Rule == "" || c.Source() == "" {
 					t.Fatalf("%s: %+v", name, c)
 				}
-				if c.Confidence != "seen" && !strings.Contains(c.Text, edition) {
+				if c.Confidence != "seen" && !strings.Contains(c.Source(), edition) {
 					t.Fatalf("%s: %+v does not send to the edition", name, c)
 				}
 			}

@@ -39,7 +39,7 @@ func (n Nuclides) judge(f Facts) judgement {
 	if !ok {
 		return judgement{verdict: Short, unit: "mm", value: f.WMM, text: say("%s is not among %v", f.Nuclide, slices.Sorted(maps.Keys(n.Ranges)))}
 	}
-	text := say("%s through %g to %g mm, for %g to %g mm", f.Nuclide, f.ThinMM, f.ThickMM, r.FromMM, r.ToMM)
+	text := say("%s through %s mm, for %g to %g mm", f.Nuclide, extent(f.ThinMM, f.ThickMM, "%.4g"), r.FromMM, r.ToMM)
 	switch {
 	case atMost(f.ThickMM, r.ToMM) == Short:
 		return judgement{Short, f.ThickMM, r.ToMM, "mm", text}
