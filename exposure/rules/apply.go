@@ -32,13 +32,22 @@ type Check struct {
 // from one.
 func (c Check) Source() string {
 	s := c.Clause + "; " + Confidences[c.Confidence]
-	if c.Confidence != "seen" && c.Confidence != "company" {
+	if c.recalled() {
 		s += "; " + edition
 	}
 	if c.From != "" {
 		s += "; company table " + c.From
 	}
 	return s
+}
+
+// recalled tells of a figure of a document that nobody here has read in it.
+func (c Check) recalled() bool {
+	switch c.Confidence {
+	case "seen", "company", "exact", "common practice":
+		return false
+	}
+	return true
 }
 
 // edition stands with every figure that nobody read in the document.

@@ -14,6 +14,7 @@ type Facts struct {
 	// Source.
 	KV      float64 // 0 with a sealed source
 	Nuclide string  // "" with a tube
+	ConeDeg float64 // full opening of the useful beam
 
 	// Part.
 	Family  string  // materials.Material.Family of the thickest layer; "" when layers of families differ by more than a tenth
@@ -59,9 +60,9 @@ func FactsOf(p plan.Plan) (Facts, error) {
 		return Facts{}, err
 	}
 	if t := n.Source.Tube; t != nil {
-		f.KV = t.KV
+		f.KV, f.ConeDeg = t.KV, t.ConeDeg
 	} else if s := n.Source.Sealed; s != nil {
-		f.Nuclide = s.Nuclide
+		f.Nuclide, f.ConeDeg = s.Nuclide, s.ConeDeg
 	}
 	switch d := n.Detector; {
 	case d.Film != nil:

@@ -134,8 +134,12 @@ func (r Rise) applies(f Facts) bool { return f.Setup.Kind != plan.DoubleWallDoub
 func (r Rise) judge(f Facts) judgement {
 	g := f.Setup
 	if g.Pipe == (setup.Pipe{}) {
-		return judgement{verdict: Undecided, value: 0, limit: 2 * setup.PlateHalfMM(g.SFDMM, r.K), unit: "mm",
-			text: say("read at most %.4g mm of film: the length that is read is not in the plan", 2*setup.PlateHalfMM(g.SFDMM, r.K))}
+		most := 2 * setup.PlateHalfMM(g.SFDMM, r.K)
+		text := say("read at most %.4g mm of film", most)
+		if beam := 2 * setup.ConeRadiusMM(f.ConeDeg, g.SFDMM); f.ConeDeg > 0 && beam < most {
+			most, text = beam, say("read at most %.4g mm of film, the beam reaches no further", beam)
+		}
+		return judgement{verdict: Undecided, limit: most, unit: "mm", text: text + ": the length that is read is not in the plan"}
 	}
 	s, err := g.Pipe.ShotsAround(g.Ring(), g.FromAxisMM, r.K)
 	if err != nil {

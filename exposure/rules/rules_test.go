@@ -1,9 +1,11 @@
 package rules
 
 import (
+	"flag"
 	"fmt"
 	"math"
 	"math/rand/v2"
+	"os"
 	"strings"
 	"testing"
 
@@ -32,6 +34,33 @@ func TestRows(t *testing.T) {
 	}
 	if got, want := fmt.Sprint(Ours().Names()), fmt.Sprint(plan.RuleSets()); got != want {
 		t.Errorf("sets %s, a plan may name %s", got, want)
+	}
+}
+
+var update = flag.Bool("update", false, "write RULES.md anew")
+
+func TestPage(t *testing.T) {
+	page := Ours().Page()
+	if *update {
+		if err := os.WriteFile("RULES.md", []byte(page), 0o644); err != nil {
+			t.Fatal(err)
+		}
+	}
+	have, err := os.ReadFile("RULES.md")
+	if err != nil {
+		t.Fatal(err)
+	}
+	if string(have) != page {
+		t.Error("RULES.md is not what the data says: run go test ./exposure/rules -update")
+	}
+	_, sample, _ := strings.Cut(page, "```json\n")
+	sample, _, ok := strings.Cut(sample, "```")
+	over, err := Ours().Over("works-7.json", []byte(sample))
+	if !ok || err != nil {
+		t.Fatalf("the file that the page shows is refused: %v", err)
+	}
+	if !strings.Contains(over.Page(), "company, works-7.json") {
+		t.Error("the page does not name the company's file")
 	}
 }
 
@@ -98,7 +127,7 @@ func TestLowConfidenceDecidesNothing(t *testing.T) {
 				if math.IsNaN(c.Value) || math.IsInf(c.Value, 0) || math.IsNaN(c.Limit) || math.IsInf(c.Limit, 0) || c.Text == "" || c.Rule == "" || c.Source() == "" {
 					t.Fatalf("%s: %+v", name, c)
 				}
-				if c.Confidence != "seen" && !strings.Contains(c.Source(), edition) {
+				if c.recalled() && !strings.Contains(c.Source(), edition) {
 					t.Fatalf("%s: %+v does not send to the edition", name, c)
 				}
 			}
@@ -165,6 +194,44 @@ func TestEllipse(t *testing.T) {
 	f.Setup.Image, f.Shots = plan.Perpendicular, 2
 	if c := find(t, s, f, "shots"); c.Verdict != Short || c.Limit != 3 {
 		t.Errorf("%+v", c)
+	}
+}
+
+// TestCone traces the edge of what a shot shows: the angle at the source by the
+// law of cosines, which the rule does not use.
+func TestCone(t *testing.T) {
+	s := set(t, "iso17636-1:2013/B")
+	rng := rand.New(rand.NewPCG(23, 24))
+	short := 0
+	for range 500 {
+		f := plate(10)
+		f.ConeDeg, f.Shots = 40, 2+rng.IntN(8)
+		f.Setup.Kind, f.Setup.Pipe = plan.DoubleWallSingleImage, setup.Pipe{ODMM: 60 + 400*rng.Float64(), WallMM: 5}
+		r := f.Setup.Pipe.Outer()
+		e := r * (1.02 + 3*rng.Float64())
+		f.Setup.FromAxisMM = e
+		phi := math.Pi / float64(f.Shots) // at the axis, from the far side
+		side := math.Sqrt(e*e + r*r + 2*e*r*math.Cos(phi))
+		want := 2 * math.Acos((e*e+side*side-r*r)/(2*e*side)) * 180 / math.Pi
+		c := find(t, s, f, "cone")
+		if math.Abs(c.Value-want) > 1e-6 || (c.Verdict == Holds) != (want <= 40) {
+			t.Fatalf("%+v: %+v, want %v deg", f.Setup, c, want)
+		}
+		if c.Verdict == Short {
+			short++
+		}
+	}
+	if short == 0 || short == 500 {
+		t.Errorf("%d of 500 fall short", short)
+	}
+	f := plate(10)
+	f.ConeDeg, f.Setup.Kind, f.Setup.Pipe = 40, plan.Panoramic, setup.Pipe{ODMM: 300, WallMM: 10}
+	if c := find(t, s, f, "cone"); c.Verdict != Short {
+		t.Errorf("a directional head lights a whole pipe: %+v", c)
+	}
+	f.Setup.Kind, f.Setup.FromAxisMM = plan.DoubleWallSingleImage, 300
+	if c := find(t, s, f, "cone"); c.Verdict != Undecided {
+		t.Errorf("without the number of shots: %+v", c)
 	}
 }
 

@@ -47,6 +47,7 @@ type Row struct {
 	TwoWalls  *TwoWalls  `json:"twoWalls,omitempty"`
 	SNR       *SNR       `json:"snr,omitempty"`
 	Recorder  *Recorder  `json:"recorder,omitempty"`
+	Cone      *Cone      `json:"cone,omitempty"`
 
 	Document string `json:"-"` // "ISO 17636-1:2013"
 	From     string `json:"-"` // name of a company's file; "" for ours
@@ -59,6 +60,7 @@ var Confidences = map[string]string{
 	"medium":          "from memory, medium confidence",
 	"low":             "from memory, low confidence: guidance only",
 	"derived":         "derived from another figure of the document",
+	"exact":           "exact geometry",
 	"common practice": "common practice of the trade",
 	"company":         "a company's own figure",
 }
@@ -74,6 +76,7 @@ type judgement struct {
 // rule is the figures of a row.
 type rule interface {
 	judge(Facts) judgement
+	figures() string    // in a cell of a page
 	valid() error       // figures in order: positive, rising, no gaps
 	knobs(Facts) []knob // what may be changed to make it hold
 	applies(Facts) bool // beyond the row's scope
@@ -89,7 +92,7 @@ func (r Row) rule() (rule, error) {
 		{r.MinF != nil, r.MinF}, {r.MaxUg != nil, r.MaxUg}, {r.Density != nil, densityRule{r.Density}}, {r.Spread != nil, spreadRule{r.Spread}},
 		{r.Rise != nil, r.Rise}, {r.Travel != nil, r.Travel}, {r.Nuclides != nil, r.Nuclides}, {r.MaxKV != nil, r.MaxKV},
 		{r.FilmClass != nil, r.FilmClass}, {r.Screens != nil, r.Screens}, {r.Wires != nil, r.Wires}, {r.Plaque != nil, r.Plaque},
-		{r.SmallPipe != nil, r.SmallPipe}, {r.TwoWalls != nil, r.TwoWalls}, {r.SNR != nil, r.SNR}, {r.Recorder != nil, r.Recorder},
+		{r.SmallPipe != nil, r.SmallPipe}, {r.TwoWalls != nil, r.TwoWalls}, {r.SNR != nil, r.SNR}, {r.Recorder != nil, r.Recorder}, {r.Cone != nil, r.Cone},
 	} {
 		if c.is {
 			found = append(found, c.r)
