@@ -1,6 +1,9 @@
 package drafting
 
 import (
+	"strings"
+	"unicode/utf8"
+
 	"golang.org/x/image/font"
 	"golang.org/x/image/font/gofont/gobold"
 	"golang.org/x/image/font/gofont/goregular"
@@ -86,39 +89,53 @@ const (
 	Leading   = 1.3
 )
 
-// Wrap breaks text into lines no wider than a width; a word wider than it
-// stands alone on its line. Line feeds break always.
+// Wrap breaks text into lines no wider than a width, between words, and inside
+// a word only where it alone is wider: behind a stroke, hyphen or colon if it
+// has one, else behind the last letter that fits. Line feeds break always.
 func (f *Fonts) Wrap(s string, size float64, bold bool, width float64) []string {
 	var out []string
-	cur := ""
-	flush := func() { out = append(out, cur); cur = "" }
-	for len(s) > 0 {
-		word, sep := nextWord(s)
-		s = s[len(word)+len(sep):]
-		try := word
-		if cur != "" {
-			try = cur + " " + word
+	for _, line := range strings.Split(s, "\n") {
+		cur := ""
+		for _, word := range strings.Fields(line) {
+			if cur != "" {
+				if try := cur + " " + word; f.Width(try, size, bold) <= width {
+					cur = try
+					continue
+				}
+				out = append(out, cur)
+			}
+			for f.Width(word, size, bold) > width {
+				n := f.breakAt(word, size, bold, width)
+				if n >= len(word) {
+					break
+				}
+				out = append(out, word[:n])
+				word = word[n:]
+			}
+			cur = word
 		}
-		if cur != "" && f.Width(try, size, bold) > width {
-			flush()
-			try = word
-		}
-		cur = try
-		if sep == "\n" {
-			flush()
-		}
-	}
-	if cur != "" || len(out) == 0 {
-		flush()
+		out = append(out, cur)
 	}
 	return out
 }
 
-func nextWord(s string) (word, sep string) {
-	for i := 0; i < len(s); i++ {
-		if s[i] == ' ' || s[i] == '\n' {
-			return s[:i], s[i : i+1]
+// breakAt is how many bytes of a word that is too wide stand on its line.
+func (f *Fonts) breakAt(word string, size float64, bold bool, width float64) int {
+	w, fits, soft := 0.0, 0, 0
+	c := f.face(bold)
+	for i, r := range word {
+		w += max(c.of(r), 0) * size
+		end := i + utf8.RuneLen(r)
+		if w > width && i > 0 {
+			break
+		}
+		fits = end
+		if strings.ContainsRune("-/:_", r) {
+			soft = end
 		}
 	}
-	return s, ""
+	if soft > 0 && fits < len(word) {
+		return soft
+	}
+	return fits
 }

@@ -39,7 +39,7 @@ func PaperLight() Palette {
 func SlateLight() Palette {
 	return Palette{
 		Sheet: {17, 22, 27}, Block: {27, 34, 41}, Line: {240, 242, 243}, Faint: {176, 186, 194}, Ghost: {58, 68, 77},
-		Beam: {255, 186, 66}, BeamWash: {62, 48, 18}, Rope: {255, 122, 92}, RopeWash: {70, 30, 22}, Reverse: {17, 22, 27}, Focus: {240, 242, 243},
+		Beam: {255, 186, 66}, BeamWash: {50, 40, 18}, Rope: {255, 122, 92}, RopeWash: {64, 28, 20}, Reverse: {17, 22, 27}, Focus: {240, 242, 243},
 	}
 }
 

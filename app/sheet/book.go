@@ -42,8 +42,9 @@ func (u *UI) bookList(r drafting.Rect) {
 	b := &u.bench
 	v := u.s.Book
 	in := r.Inset(touch.Unit)
-	top, rest := in.CutTop(u.look.Target)
-	verify, words := top.CutRight(110 * u.look.Text)
+	side := b.Fonts.Width("Verify", u.look.Body(), true) + 4*touch.Unit
+	top, rest := in.CutTop(max(u.look.Target, u.verdictHeight(in.W()-side)))
+	verify, words := top.CutRight(side)
 	b.Button(touch.Button{Box: verify, Label: "Verify", Do: u.do(desk.VerifyBook{})})
 	u.verdict(words)
 	_, rest = rest.CutTop(touch.Unit)
@@ -59,33 +60,52 @@ func (u *UI) bookList(r drafting.Rect) {
 	u.entries(list)
 }
 
-// verdict says how many entries there are and whether they verified.
+// verdictText says how many entries there are and whether they verified.
+func (u *UI) verdictText() (count, state string) {
+	v := u.s.Book
+	count = fmt.Sprintf("%d entries", v.Count)
+	if v.Count == 1 {
+		count = "1 entry"
+	}
+	switch d := v.Verdict; {
+	case d == nil:
+		return count, "not verified in this session"
+	case d.Holds():
+		return count, fmt.Sprintf("all %d hold, verified %s", d.Entries, d.At.Format("15:04:05"))
+	default:
+		return count, fmt.Sprintf("%d faults: %s", len(d.Faults), d.Faults[0])
+	}
+}
+
+// verdictMark is the room of the verdict's symbol.
+func (u *UI) verdictMark() float64 {
+	if u.s.Book.Verdict == nil {
+		return 0
+	}
+	return 36
+}
+
+func (u *UI) verdictHeight(width float64) float64 {
+	count, state := u.verdictText()
+	width -= u.verdictMark() + touch.Unit
+	return u.bench.Height(width, count, u.look.Strong()) + u.bench.Height(width, state, u.look.Caption())
+}
+
 func (u *UI) verdict(r drafting.Rect) {
 	b := &u.bench
-	v := u.s.Book
-	text := fmt.Sprintf("%d entries", v.Count)
-	if v.Count == 1 {
-		text = "1 entry"
+	count, state := u.verdictText()
+	b.Words(r, count+", "+state)
+	h := u.verdictHeight(r.W())
+	mark, words := r.CutLeft(u.verdictMark())
+	if d := u.s.Book.Verdict; d != nil && d.Holds() {
+		b.Check(mark.Mid(), 22, drafting.Line)
+	} else if d != nil {
+		b.Warning(mark.Mid(), 24, drafting.Rope)
 	}
-	state := "not verified in this session"
-	if d := v.Verdict; d != nil {
-		state = fmt.Sprintf("all %d hold, verified %s", d.Entries, d.At.Format("15:04:05"))
-		if !d.Holds() {
-			state = fmt.Sprintf("%d faults: %s", len(d.Faults), d.Faults[0])
-		}
-		c := drafting.Pt{X: r.X0 + 14, Y: r.Mid().Y}
-		if d.Holds() {
-			b.Check(c, 22, drafting.Line)
-		} else {
-			b.Warning(c, 24, drafting.Rope)
-		}
-		_, r = r.CutLeft(36)
-	}
-	h := b.Height(r.W()-touch.Unit, state, u.look.Caption())
-	y := r.Mid().Y - (u.look.Body()*1.3+h)/2
-	b.Paragraph(drafting.Rect{X0: r.X0, Y0: y, X1: r.X1, Y1: r.Y1}, text, u.look.Strong())
-	b.Paragraph(drafting.Rect{X0: r.X0, Y0: y + u.look.Body()*1.3, X1: r.X1 - touch.Unit, Y1: r.Y1}, state, u.look.Caption())
-	b.Words(r, text+", "+state)
+	y := words.Mid().Y - h/2
+	words.X1 -= touch.Unit
+	words.Y0 = y + b.Paragraph(drafting.Rect{X0: words.X0, Y0: y, X1: words.X1, Y1: r.Y1}, count, u.look.Strong())
+	b.Paragraph(words, state, u.look.Caption())
 }
 
 func (u *UI) entries(r drafting.Rect) {

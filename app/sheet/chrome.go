@@ -145,6 +145,9 @@ func (u *UI) notices(area drafting.Rect) drafting.Rect {
 func (u *UI) notice(area drafting.Rect, text string, fault bool) drafting.Rect {
 	b := &u.bench
 	st := u.look.Plain()
+	if u.look.Text > 1.3 {
+		st.Size = u.look.Small()
+	}
 	width := area.W() - u.look.Target - 3*touch.Unit
 	icon := 0.0
 	if fault {

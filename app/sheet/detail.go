@@ -43,7 +43,7 @@ func (u *UI) sectionFits(height, width float64) bool {
 	for _, d := range bands {
 		need += u.bandWords(box.W()-stackWidth(box)-26, d)
 	}
-	return len(bands) > 0 && need <= box.H()+u.look.Small()
+	return len(bands) > 0 && need <= box.H()
 }
 
 // bandWords is the height of what is written beside a band.
@@ -69,8 +69,12 @@ func (u *UI) detailView(r drafting.Rect) {
 	y := in.Y0 + math.Max(0, (in.H()-total)/2)
 	stack := drafting.Rect{X0: in.X0, X1: in.X0 + stackWidth(in), Y0: y, Y1: y + total}
 	b.Fill(drafting.Box(drafting.Rect{X0: stack.X0, Y0: stack.Y0 - 22, X1: stack.X1, Y1: stack.Y1}), drafting.BeamWash)
-	u.iqi(stack, bands, u.look.Small())
 	tops := u.wordTops(stack, in, bands)
+	foot := stack.Y1
+	for i, d := range bands {
+		foot = math.Max(foot, tops[i]+u.bandWords(in.X1-stack.X1-26, d))
+	}
+	u.iqi(stack, bands, foot)
 	for i, d := range bands {
 		u.band(drafting.Rect{X0: stack.X0, Y0: y, X1: stack.X1, Y1: y + d.height}, drafting.Rect{X0: stack.X1 + 26, Y0: tops[i], X1: in.X1, Y1: in.Y1}, d)
 		y += d.height
@@ -98,7 +102,7 @@ func (u *UI) wordTops(stack, in drafting.Rect, bands []band) []float64 {
 		}
 		y += d.height
 	}
-	foot := in.Y1 + u.look.Small()
+	foot := in.Y1
 	for i := len(bands) - 1; i >= 0; i-- {
 		if h := u.bandWords(width, bands[i]); h > 0 {
 			tops[i] = math.Min(tops[i], foot-h)
@@ -291,8 +295,8 @@ func (u *UI) bandText(r, words drafting.Rect, d band) {
 
 // iqi draws the wires of the indicator in section where it lies: on the
 // source side, at the film where only that side can be reached.
-func (u *UI) iqi(stack drafting.Rect, bands []band, small float64) {
-	b := &u.bench
+func (u *UI) iqi(stack drafting.Rect, bands []band, foot float64) {
+	b, small := &u.bench, u.look.Small()
 	p := u.s.Filled
 	text, y := "IQI, source side", stack.Y0
 	if p.Setup.Kind == plan.DoubleWallSingleImage || p.Setup.Kind == plan.Panoramic {
@@ -311,7 +315,7 @@ func (u *UI) iqi(stack drafting.Rect, bands []band, small float64) {
 	}
 	at := drafting.Pt{X: stack.X0, Y: stack.Y0 - 26}
 	if y != stack.Y0 {
-		at.Y = stack.Y1 + small*1.3
+		at.Y = foot + small*1.2
 	}
 	b.Text(at, text, drafting.Style{Size: small, Ink: drafting.Faint})
 }

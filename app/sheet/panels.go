@@ -161,11 +161,11 @@ func (u *UI) workingPanel(r drafting.Rect) {
 		}
 	}
 	r = u.heading(r, title)
-	if t := u.spreadText(); u.s.Panel.Field == "" && t != "" {
-		h := u.bench.Paragraph(r, t, u.look.Caption())
-		_, r = r.CutTop(h + touch.Unit)
+	preface := ""
+	if u.s.Panel.Field == "" {
+		preface = u.spreadText()
 	}
-	u.steps("Working steps", r, steps)
+	u.steps("Working steps", r, preface, steps)
 }
 
 // spreadText names what the spread of the time comes from, largest first.
@@ -180,19 +180,28 @@ func (u *UI) spreadText() string {
 	return "Spread of the time, one standard deviation each: " + strings.Join(parts[:min(4, len(parts))], ", ")
 }
 
-func (u *UI) steps(key string, r drafting.Rect, steps []working.Step) {
+// steps lists steps under a preface, scrolling.
+func (u *UI) steps(key string, r drafting.Rect, preface string, steps []working.Step) {
 	b := &u.bench
-	width := r.W() - u.look.Target - touch.Unit
-	height := 0.0
-	for _, s := range steps {
-		height += u.step1(drafting.Rect{X1: width}, s, false)
-	}
 	if len(steps) == 0 {
 		b.Paragraph(r, "there is no working without an answer", u.look.Plain())
 		return
 	}
+	width := r.W() - u.look.Target - touch.Unit
+	height := 0.0
+	if preface != "" {
+		height = b.Height(width, preface, u.look.Caption()) + touch.Unit
+	}
+	head := height
+	for _, s := range steps {
+		height += u.step1(drafting.Rect{X1: width}, s, false)
+	}
 	b.Scroll(key, r, height, func(in drafting.Rect) {
 		y := in.Y0
+		if preface != "" {
+			b.Paragraph(drafting.Rect{X0: in.X0, Y0: y, X1: in.X0 + width, Y1: in.Y1}, preface, u.look.Caption())
+			y += head
+		}
 		for _, s := range steps {
 			y += u.step1(drafting.Rect{X0: in.X0, Y0: y, X1: in.X0 + width, Y1: in.Y1}, s, true)
 		}
@@ -275,8 +284,8 @@ func (u *UI) lookRows() []lookRow {
 			pick("Safelight", u.s.Light == desk.Safelight, desk.SetLight{To: desk.Safelight}),
 		}},
 		{"Units", []touch.Button{
-			pick("mm, GBq, µSv", u.s.Units == desk.SI, desk.SetUnits{To: desk.SI}),
-			pick("in, Ci, mrem", u.s.Units == desk.Customary, desk.SetUnits{To: desk.Customary}),
+			pick("mm, GBq", u.s.Units == desk.SI, desk.SetUnits{To: desk.SI}),
+			pick("in, Ci", u.s.Units == desk.Customary, desk.SetUnits{To: desk.Customary}),
 		}},
 		{"Text", nil},
 		{"Targets", []touch.Button{

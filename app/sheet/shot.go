@@ -41,6 +41,9 @@ func (u *UI) shotTall(in drafting.Rect) {
 	b := &u.bench
 	answer := u.answerHeight(in.W())
 	if u.s.Panel.Kind != desk.NoPanel {
+		if in.H()-answer < u.panelHeight(in.W(), 0) && u.s.Panel.Kind == desk.DialPanel {
+			answer = 0 // a stated refusal leaves no room for both; the drawing and the dial show the figures
+		}
 		most := in.H() - answer
 		height := math.Min(u.panelHeight(in.W(), most), most)
 		if most-height < u.headRoom()+u.footRoom()+math.Max(40, 2.6*u.look.Small()) {
@@ -49,7 +52,9 @@ func (u *UI) shotTall(in drafting.Rect) {
 		panel, rest := in.CutBottom(height)
 		band, view := rest.CutBottom(answer)
 		u.panelIn(panel)
-		u.answerBand(band)
+		if answer > 0 {
+			u.answerBand(band)
+		}
 		u.drawing(view)
 		return
 	}

@@ -369,7 +369,10 @@ func (u *UI) partTarget(g sight, p plan.Plan, small float64) {
 			c = g.back - p.Part.ODMM/2*g.scale
 		}
 		st := drafting.Style{Size: small, Bold: true, Ink: drafting.Line, Align: drafting.Middle, Knock: true}
-		box := b.Text(drafting.Pt{X: g.cx, Y: c + drafting.CapHeight*small/2}, "De "+u.s.Units.Format(desk.Length, p.Part.ODMM, 4), st)
+		text, box := "De "+u.s.Units.Format(desk.Length, p.Part.ODMM, 4), drafting.Rect{X0: g.cx - 28, X1: g.cx + 28, Y0: c - 28, Y1: c + 28}
+		if b.Fonts.Width(text, small, true) < g.view.W() {
+			box = b.Text(drafting.Pt{X: g.cx, Y: c + drafting.CapHeight*small/2}, text, st)
+		}
 		u.open(box, "part.odMM", "")
 		return
 	}

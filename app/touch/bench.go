@@ -32,6 +32,7 @@ type Bench struct {
 	scrolls map[string]*scrollState
 	shade   drafting.Rect // targets that follow are cut to it; empty: none
 	keys    keyboard
+	frame   int
 }
 
 type targetKind uint8
@@ -54,6 +55,7 @@ type target struct {
 	hold     func(repeat bool)
 	drag     func(Drag)
 	selected bool
+	cut      bool // by the area that it scrolls in
 }
 
 type clickState struct {
@@ -71,6 +73,7 @@ func (b *Bench) Begin(gtx layout.Context, look *Look) {
 		b.clicks, b.drags, b.scrolls = map[string]*clickState{}, map[string]*dragState{}, map[string]*scrollState{}
 	}
 	b.runTouched()
+	b.frame++
 	size := gtx.Constraints.Max
 	area := drafting.Rect{X1: float64(size.X) / b.scale(), Y1: float64(size.Y) / b.scale()}
 	if b.Drawing == nil {
@@ -158,6 +161,7 @@ func (b *Bench) End() layout.Dimensions {
 		case scrollTarget:
 			stack = append(stack, clip.Rect(b.px(t.box)).Push(gtx.Ops))
 			b.scrolls[t.key].gesture.Add(gtx.Ops)
+			b.runScroll(b.scrolls[t.key])
 		case endScroll:
 			stack[len(stack)-1].Pop()
 			stack = stack[:len(stack)-1]
@@ -182,9 +186,13 @@ func (b *Bench) register(t *target) {
 			return layout.Dimensions{Size: gtx.Constraints.Min}
 		})
 	case dragTarget:
+		// The label needs an area of its own: Gio drops the description of an
+		// area whose handler takes no clicks.
 		defer clip.Rect(r).Push(gtx.Ops).Pop()
 		b.describe(t)
+		defer clip.Rect(r).Push(gtx.Ops).Pop()
 		event.Op(gtx.Ops, b.drags[t.key])
+		b.wake(b.drags[t.key])
 	case wordTarget:
 		defer clip.Rect(r).Push(gtx.Ops).Pop()
 		b.describe(t)
@@ -208,6 +216,7 @@ func (b *Bench) px(r drafting.Rect) image.Rectangle {
 // add names a target, cut to the area that is scrolled if there is one.
 func (b *Bench) add(t target) {
 	if !b.shade.Empty() && t.kind != scrollTarget && t.kind != endScroll {
+		t.cut = !b.shade.Holds(t.box)
 		t.box = t.box.And(b.shade)
 	}
 	if t.box.Empty() && t.kind != endScroll {
@@ -237,6 +246,17 @@ func (b *Bench) Words(box drafting.Rect, text string) {
 // Cover keeps touches on a panel from reaching what lies under it.
 func (b *Bench) Cover(key string, box drafting.Rect) {
 	b.add(target{kind: coverTarget, key: "cover " + key, box: box})
+}
+
+// Cut says whether a target of this frame is cut by the area that it scrolls
+// in.
+func (b *Bench) Cut(label string) bool {
+	for _, t := range b.targets {
+		if t.label == label && t.cut {
+			return true
+		}
+	}
+	return false
 }
 
 // Pressed says whether a target is pressed now.
@@ -284,7 +304,7 @@ func (b *Bench) Scroll(key string, box drafting.Rect, height float64, draw func(
 	}
 	view := box
 	if height > box.H()+0.5 {
-		strip, rest := box.CutRight(b.Look.Target)
+		strip, rest := box.CutRight(b.scrollStrip(box))
 		view = rest
 		defer b.scrollButtons(key, strip, s)
 	}
@@ -306,9 +326,18 @@ func (b *Bench) Scroll(key string, box drafting.Rect, height float64, draw func(
 // height: the buttons take a column where it does not fit.
 func (b *Bench) ScrollWidth(box drafting.Rect, height float64) float64 {
 	if height > box.H()+0.5 {
-		return box.W() - b.Look.Target
+		return box.W() - b.scrollStrip(box)
 	}
 	return box.W()
+}
+
+// scrollStrip is the width of the buttons: one above the other, or side by
+// side where the area is too low for both.
+func (b *Bench) scrollStrip(box drafting.Rect) float64 {
+	if box.H() < 2*b.Look.Target {
+		return 2 * b.Look.Target
+	}
+	return b.Look.Target
 }
 
 // ScrollTo brings a place of the content to the top of its area.
@@ -319,12 +348,18 @@ func (b *Bench) ScrollTo(key string, at float64) {
 }
 
 func (b *Bench) scrollButtons(key string, strip drafting.Rect, s *scrollState) {
-	side := min(b.Look.Target, strip.H()/2)
-	page := max(strip.H()-side, side)
+	side := b.Look.Target
+	page := max(strip.H()-side, side/2)
 	up := drafting.Rect{X0: strip.X0, Y0: strip.Y0, X1: strip.X1, Y1: strip.Y0 + side}
 	down := drafting.Rect{X0: strip.X0, Y0: strip.Y1 - side, X1: strip.X1, Y1: strip.Y1}
-	b.Line(drafting.Pt{X: strip.Mid().X, Y: up.Y1}, drafting.Pt{X: strip.Mid().X, Y: down.Y0}, drafting.Hair, drafting.Ghost)
-	if run := down.Y0 - up.Y1; run > 24 && s.most > 0 {
+	if strip.H() < 2*side {
+		half := strip.Columns(2, 0)
+		up, down = half[0], half[1]
+	}
+	if down.Y0 > up.Y1 {
+		b.Line(drafting.Pt{X: strip.Mid().X, Y: up.Y1}, drafting.Pt{X: strip.Mid().X, Y: down.Y0}, drafting.Hair, drafting.Ghost)
+	}
+	if run := down.Y0 - up.Y1; strip.H() > 2*side && run > 24 && s.most > 0 {
 		grip := max(16, run*strip.H()/(strip.H()+s.most))
 		y := up.Y1 + (run-grip)*s.offset/s.most
 		b.Fill(drafting.Box(drafting.Rect{X0: strip.Mid().X - 2, Y0: y, X1: strip.Mid().X + 2, Y1: y + grip}), drafting.Faint)

@@ -82,13 +82,21 @@ func (b *Bench) buttonFace(t Button, text string, ink drafting.Ink) {
 	b.fitLines(in, text, style)
 }
 
-// fitLines writes text centred in a box, on as many lines as it needs.
-func (b *Bench) fitLines(in drafting.Rect, text string, style drafting.Style) {
+// fits says whether wrapped text has room in a box without breaking a word.
+func (b *Bench) fits(in drafting.Rect, text string, style drafting.Style) bool {
 	for _, word := range strings.Fields(text) {
 		if b.Fonts.Width(word, style.Size, style.Bold) > in.W() {
-			in, style.Size = in.Grow(Unit-2), b.Look.Small()
-			break
+			return false
 		}
+	}
+	lines := len(b.Fonts.Wrap(text, style.Size, style.Bold, in.W()))
+	return (float64(lines)-1)*style.Size*1.2+style.Size*drafting.CapHeight <= in.H()
+}
+
+// fitLines writes text centred in a box, on as many lines as it needs.
+func (b *Bench) fitLines(in drafting.Rect, text string, style drafting.Style) {
+	if !b.fits(in, text, style) {
+		in, style.Size = in.Grow(Unit-2), b.Look.Small()
 	}
 	lines := b.Fonts.Wrap(text, style.Size, style.Bold, in.W())
 	step := style.Size * 1.2

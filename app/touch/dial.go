@@ -56,11 +56,14 @@ func (d *Dial) Layout(b *Bench, r drafting.Rect, notch float64, s DialSpec) {
 	head.X1 -= notch
 	d.head(b, head, b.Look.Target+Unit, s)
 	_, rest = rest.CutTop(Unit)
-	if d.Keypad {
+	switch {
+	case rest.H() < 40: // a low panel has its head alone
+	case d.Keypad:
 		d.keypad(b, rest, s)
-		return
+	default:
+		rest.Y1 = min(rest.Y1, rest.Y0+88)
+		d.ruler(b, rest, s)
 	}
-	d.ruler(b, rest, s)
 }
 
 // Height is what the dial needs.

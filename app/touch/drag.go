@@ -2,7 +2,6 @@ package touch
 
 import (
 	"image/color"
-	"time"
 
 	"gioui.org/io/pointer"
 
@@ -25,10 +24,10 @@ const slop = 6
 type dragState struct {
 	id     pointer.ID
 	active bool
+	frame  int // when it was last shown
 	moved  bool
 	from   drafting.Pt
 	at     drafting.Pt
-	start  time.Duration
 }
 
 func (b *Bench) dragOf(key string) *dragState {
@@ -56,9 +55,24 @@ func (b *Bench) Dragging(label string) (drafting.Pt, bool) {
 	return s.at, true
 }
 
+func (s *dragState) filter() pointer.Filter {
+	return pointer.Filter{Target: s, Kinds: pointer.Press | pointer.Drag | pointer.Release | pointer.Cancel}
+}
+
+// wake asks for the events of a drag target in the frame that first shows it,
+// and forgets a finger that was down when it was last shown. Without it the
+// first press would be lost: a handler that has asked for nothing gets nothing.
+func (b *Bench) wake(s *dragState) {
+	if s.frame != b.frame-1 {
+		s.active = false
+		b.Gtx.Event(s.filter())
+	}
+	s.frame = b.frame
+}
+
 func (b *Bench) runDrag(t *target, s *dragState) {
 	for {
-		ev, ok := b.Gtx.Event(pointer.Filter{Target: s, Kinds: pointer.Press | pointer.Drag | pointer.Release | pointer.Cancel})
+		ev, ok := b.Gtx.Event(s.filter())
 		if !ok {
 			return
 		}
@@ -74,7 +88,7 @@ func (b *Bench) runDrag(t *target, s *dragState) {
 func (b *Bench) follow(t *target, s *dragState, e pointer.Event, at drafting.Pt) {
 	switch {
 	case e.Kind == pointer.Press && !s.active:
-		*s = dragState{id: e.PointerID, active: true, from: at, at: at}
+		*s = dragState{id: e.PointerID, active: true, frame: s.frame, from: at, at: at}
 		b.Gtx.Execute(pointer.GrabCmd{Tag: s, ID: e.PointerID})
 		t.drag(Drag{At: at, From: at})
 	case !s.active || e.PointerID != s.id:
