@@ -116,11 +116,7 @@ func (in Input) allowed(l plan.Limit) (float64, working.Step) {
 		step.Note = "the averaging time is the meter's smoothing; beam-off time is not averaged in"
 		return l.RateUSvPerH, step
 	}
-	hours := map[string]float64{"hour": 1, "job": HoursPerJob, "week": HoursPerWeek, "year": HoursPerYear}[l.Per]
-	occupancy := l.Occupancy
-	if l.Per == "hour" || occupancy == 0 {
-		occupancy = 1 // in any one hour somebody may stand there all of it
-	}
+	hours, occupancy := period(l)
 	share := in.onShare(l.Per == "hour")
 	step.Formula = "H'L = H / (T s o)"
 	step.Value = l.DoseUSv / (hours * share * occupancy)
@@ -257,29 +253,16 @@ const mostHalfConeDeg = 60
 // of the part falls out. A part of several materials counts as the one that
 // scatters most.
 func (in Input) scatter() (float64, error) {
-	keV, perCM2 := grouped(in.Spectrum)
-	half := min(in.coneDeg()/2, mostHalfConeDeg)
-	t := math.Tan(half * math.Pi / 180)
-	var worst float64
-	seen := map[string]bool{}
-	for _, l := range in.Plan.Part.Layers {
-		if seen[l.Material] {
-			continue
-		}
-		seen[l.Material] = true
-		m, err := materials.Lookup(l.Material)
-		if err != nil {
-			return 0, err
-		}
-		e, err := transport.Emitted(m, in.Plan.Part.TotalMM(), keV, perCM2)
-		if err != nil {
-			return 0, err
-		}
-		for deg := half; deg <= 180; deg += 5 {
-			worst = max(worst, e.Weighted(deg, ambientPerFluence))
-		}
+	byDeg, err := in.scatterByDeg()
+	if err != nil {
+		return 0, err
 	}
-	return worst * math.Pi * t * t * in.Strength * 3600, nil
+	half := min(in.coneDeg()/2, mostHalfConeDeg)
+	var worst float64
+	for _, h := range byDeg[int(half):] {
+		worst = max(worst, h)
+	}
+	return worst, nil
 }
 
 // grouped gathers a fine spectrum into groups 5 % wide at their mean energies:
