@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"strconv"
 	"strings"
 	"unicode/utf8"
 
@@ -35,7 +36,7 @@ func parse(data []byte) (node, *FieldError) {
 	d := jsontext.NewDecoder(bytes.NewReader(data), jsontext.AllowDuplicateNames(true))
 	n, err := readNode(d, 0)
 	if err != nil {
-		return node{}, syntaxFault(data, d.InputOffset(), err)
+		return node{}, syntaxFault(data, d, err)
 	}
 	if _, err := d.ReadToken(); err != io.EOF {
 		rest := bytes.TrimLeft(data[d.InputOffset():], " \t\r\n")
@@ -125,28 +126,61 @@ func (n node) called() string {
 }
 
 // syntaxFault tells where the text stops being JSON, in our own words.
-func syntaxFault(data []byte, offset int64, err error) *FieldError {
+func syntaxFault(data []byte, d *jsontext.Decoder, err error) *FieldError {
 	var syntax *jsontext.SyntacticError
+	var path string
+	offset := d.InputOffset()
 	if errors.As(err, &syntax) {
-		offset = syntax.ByteOffset
+		offset, path = syntax.ByteOffset, pathOf(syntax.JSONPointer)
 	}
-	rest := data[min(max(offset, 0), int64(len(data))):]
-	rest = bytes.TrimLeft(rest, " \t\r\n")
+	offset = min(max(offset, 0), int64(len(data)))
+	rest := bytes.TrimLeft(data[offset:], " \t\r\n")
 	at := int64(len(data) - len(rest))
 	f := &FieldError{Field: place(data, at), Value: firstWord(rest), Problem: "is no JSON", Allowed: "a plan file, one JSON object", Mend: "check commas, quotes and brackets before this place"}
-	switch word := strings.ToLower(strings.TrimLeft(f.Value, "-+")); {
+	word := wordAround(data, at)
+	if word != f.Value && word != "-"+f.Value { // the word began as a number, which was read
+		path = pathOf(d.StackPointer())
+	}
+	row, known := FieldAt(path)
+	switch {
 	case errors.Is(err, errDeep):
 		f.Value, f.Problem, f.Mend = "", "brackets nest too deep", "a plan nests 8 deep at most"
 	case len(bytes.TrimSpace(data)) == 0:
 		f.Field, f.Problem, f.Mend = "line 1, column 1", "the file is empty", "start from a plan that works"
 	case len(rest) == 0:
 		f.Problem, f.Mend = "the file ends in the middle of the plan", "the copy is not whole: fetch it again"
-	case strings.HasPrefix(word, "nan"), strings.HasPrefix(word, "inf"):
-		f.Problem, f.Allowed, f.Mend = "is no number", "a decimal number", "write digits"
+	case known && row.Kind == Number && word != "" && !jsontext.Value(word).IsValid():
+		f.Field, f.Value, f.Problem, f.Allowed, f.Mend = path, word, "is no number", wanted(row), "write it in digits, as 12.5"
 	case !utf8.Valid(data):
 		f.Problem, f.Mend = "is no UTF-8 text", "save the file as UTF-8"
 	}
 	return f
+}
+
+// pathOf turns a JSON pointer into a path of ours.
+func pathOf(p jsontext.Pointer) string {
+	path := ""
+	for token := range p.Tokens() {
+		if _, err := strconv.Atoi(token); err == nil {
+			path += "[" + token + "]"
+			continue
+		}
+		path = join(path, token)
+	}
+	return path
+}
+
+// wordAround is the bare word that the offset stands in: NaN, -Infinity, 0x10.
+func wordAround(data []byte, at int64) string {
+	ends := func(c byte) bool { return bytes.IndexByte([]byte(" \t\r\n,:{}[]\""), c) >= 0 }
+	from, to := at, at
+	for from > 0 && !ends(data[from-1]) {
+		from--
+	}
+	for to < int64(len(data)) && !ends(data[to]) {
+		to++
+	}
+	return strings.ToValidUTF8(string(data[from:min(to, from+40)]), "?")
 }
 
 // firstWord is what stands at the start of rest, short enough to show.

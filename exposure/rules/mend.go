@@ -130,9 +130,17 @@ type solver struct {
 // that turns from short to undecided does not hold.
 func (s solver) holds(field string, to any) bool {
 	p, err := s.plan.With(field, to)
-	if err != nil || p.ValidateFor([]string{p.Rules}) != nil {
-		return false
-	}
+	return err == nil && p.ValidateFor([]string{p.Rules}) == nil && s.judge(p)
+}
+
+// between is holds for a value between two that make valid plans: what is
+// allowed of a quantity is one stretch, so the plan need not be validated.
+func (s solver) between(field string, to any) bool {
+	p, err := s.plan.With(field, to)
+	return err == nil && s.judge(p)
+}
+
+func (s solver) judge(p plan.Plan) bool {
 	f, err := s.facts(p)
 	if err != nil {
 		return false
@@ -223,7 +231,7 @@ func (s solver) close(k knob, from float64) (float64, bool) {
 		for range 60 {
 			if mid := (bad + good) / 2; math.Abs(good-bad) <= 1e-12*math.Abs(good) {
 				break
-			} else if s.holds(k.field, mid) {
+			} else if s.between(k.field, mid) {
 				good = mid
 			} else {
 				bad = mid
