@@ -2,6 +2,7 @@ package exposure
 
 import (
 	"fmt"
+	"reflect"
 	"slices"
 
 	"halfvalue/exposure/plan"
@@ -82,7 +83,7 @@ func travelShare(p plan.Plan, seconds float64) float64 {
 // while only what the detector is to read changes.
 type seer struct {
 	engine
-	key    string
+	seen   plan.Plan // what was looked at, with the reading of no account
 	shot   *shot
 	fields []field // the part, then its sections
 }
@@ -107,7 +108,7 @@ func (v *seer) facts(p plan.Plan) (rules.Facts, error) {
 	}
 	s := *v.shot
 	s.plan = full
-	if s.receptor, err = newReceptor(full.Detector); err != nil {
+	if s.receptor, err = s.receptor.reads(full.Detector); err != nil {
 		return f, err
 	}
 	seconds, err := s.receptor.wants(v.fields[0].receptorRate)
@@ -128,19 +129,10 @@ func (v *seer) facts(p plan.Plan) (rules.Facts, error) {
 
 // look reckons what arrives at the detector, unless it has just done so.
 func (v *seer) look(full plan.Plan) error {
-	same := full.Clone()
-	if d := same.Detector.Film; d != nil {
-		d.Density = 2
-	}
-	if d := same.Detector.Plate; d != nil {
-		d.SNRn = 100
-	}
-	if d := same.Detector.Panel; d != nil {
-		d.SNRn = 100
-	}
-	key, err := plan.Encode(same)
-	if err != nil || string(key) == v.key {
-		return err
+	same := full
+	same.Detector = sameReading(same.Detector)
+	if v.shot != nil && reflect.DeepEqual(same, v.seen) {
+		return nil
 	}
 	s, err := newShot(full, v.engine)
 	if err != nil {
@@ -154,8 +146,27 @@ func (v *seer) look(full plan.Plan) error {
 		}
 		fields = append(fields, f)
 	}
-	v.key, v.shot, v.fields = string(key), s, fields
+	v.seen, v.shot, v.fields = same, s, fields
 	return nil
+}
+
+// sameReading gives the detector with what it is to read set to the same.
+func sameReading(d plan.Detector) plan.Detector {
+	switch {
+	case d.Film != nil:
+		f := *d.Film
+		f.Density = 2
+		d.Film = &f
+	case d.Plate != nil:
+		f := *d.Plate
+		f.SNRn = 100
+		d.Plate = &f
+	case d.Panel != nil:
+		f := *d.Panel
+		f.SNRn = 100
+		d.Panel = &f
+	}
+	return d
 }
 
 func sectionLayers(p plan.Part) [][]plan.Layer {

@@ -3,6 +3,7 @@ package exposure
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"halfvalue/exposure/beam"
 	"halfvalue/exposure/detector"
@@ -28,7 +29,6 @@ type shot struct {
 // inverse square is asked about anything else.
 type field struct {
 	receptorRate // what the detector makes of it
-	exit         transport.Exit
 	depthMM      float64
 }
 
@@ -78,25 +78,75 @@ func (s *shot) at(depth float64) beam.Spectrum {
 	return sp
 }
 
-// behind reckons what the detector sees behind the layers. More of a part
-// never counts as less time: where scatter in a light, thin part would make
-// the detector see more than without the part, it is held at what it would see
-// without.
+// behind reckons what the detector sees behind the layers. More of a part never
+// counts as less time: a light or thin layer in a wide field can send the
+// detector more, as soft scatter, than it takes away. Where the detector would
+// see less without some of the layers, what it would see then stands.
 func (s *shot) behind(layers []plan.Layer) (field, error) {
 	stack, err := stackOf(layers)
 	if err != nil {
 		return field{}, err
 	}
 	f := field{depthMM: depthMM(layers)}
-	sp := s.at(f.depthMM)
-	if f.exit, err = transport.Slab(stack, sp.KeV, sp.PerCM2); err != nil {
-		return field{}, fmt.Errorf("part: %w", err)
+	if f.receptorRate, err = s.rateOf(stack); err != nil {
+		return field{}, err
 	}
-	f.receptorRate = s.receptor.rate(f.exit, sp.KeV).times(s.square())
+	for _, fewer := range without(stack) {
+		r, err := s.rateOf(fewer)
+		if err != nil {
+			return field{}, err
+		}
+		if r.total() < f.total() {
+			f.receptorRate = r
+		}
+	}
 	if s.bare.total() < f.total() {
 		f.receptorRate = s.bare
 	}
 	return f, nil
+}
+
+// rateOf is what the detector gathers in a second behind the stack.
+func (s *shot) rateOf(stack []transport.Layer) (receptorRate, error) {
+	var depth float64
+	for _, l := range stack {
+		depth += l.MM
+	}
+	sp := s.at(depth)
+	exit, err := transport.Slab(stack, sp.KeV, sp.PerCM2)
+	if err != nil {
+		return receptorRate{}, fmt.Errorf("part: %w", err)
+	}
+	return s.receptor.rate(exit, sp.KeV).times(s.square()), nil
+}
+
+// mostSubsets is up to how many different layers every choice of them is tried;
+// of more, each is left out alone.
+const mostSubsets = 3
+
+// without gives the stack with some but not all of its layers left out.
+func without(stack []transport.Layer) [][]transport.Layer {
+	n := len(stack)
+	if n < 2 {
+		return nil
+	}
+	var out [][]transport.Layer
+	if n > mostSubsets {
+		for i := range stack {
+			out = append(out, slices.Delete(slices.Clone(stack), i, i+1))
+		}
+		return out
+	}
+	for mask := 1; mask < 1<<n-1; mask++ {
+		var some []transport.Layer
+		for i, l := range stack {
+			if mask>>i&1 == 1 {
+				some = append(some, l)
+			}
+		}
+		out = append(out, some)
+	}
+	return out
 }
 
 // square is the source's strength at the film against that at 1 m.
@@ -105,14 +155,19 @@ func (s *shot) square() float64 {
 	return q * q * s.strength
 }
 
+// stackOf looks the layers up and joins neighbours of one material.
 func stackOf(layers []plan.Layer) ([]transport.Layer, error) {
-	stack := make([]transport.Layer, len(layers))
-	for i, l := range layers {
+	var stack []transport.Layer
+	for _, l := range layers {
 		m, err := materials.Lookup(l.Material)
 		if err != nil {
 			return nil, err
 		}
-		stack[i] = transport.Layer{Material: m, MM: l.MM}
+		if n := len(stack); n > 0 && stack[n-1].Material == m {
+			stack[n-1].MM += l.MM
+			continue
+		}
+		stack = append(stack, transport.Layer{Material: m, MM: l.MM})
 	}
 	return stack, nil
 }
@@ -156,15 +211,11 @@ func newReceptor(d plan.Detector) (receptor, error) {
 		if err != nil {
 			return r, err
 		}
-		r.film, r.density = &f, d.Film.Density
+		r.film = &f
 		r.screens = detector.NewScreens(*d.Film.ScreensMM)
-		if most := f.MostDensity(); r.density >= most {
-			return r, &plan.FieldError{Field: "detector.film.density", Value: fmt.Sprint(r.density), Problem: "is beyond what the film reaches",
-				Allowed: fmt.Sprintf("%.2f to %.2f", f.BaseAndFog, most), Mend: "take a lower density"}
-		}
 	case d.Plate != nil:
 		l := detector.Plate()
-		r.digital, r.snrN = &l, d.Plate.SNRn
+		r.digital = &l
 		if d.Plate.ScreensMM != nil && d.Plate.ScreensMM[0] > 0 {
 			lead, err := materials.Lookup("Pb")
 			if err != nil {
@@ -175,13 +226,28 @@ func newReceptor(d plan.Detector) (receptor, error) {
 		}
 	case d.Panel != nil:
 		l := detector.Panel()
-		r.digital, r.snrN = &l, d.Panel.SNRn
+		r.digital = &l
 	}
-	if r.digital != nil && r.snrN >= r.digital.MostSNRn() {
-		field := "detector.plate.snrN"
-		if d.Panel != nil {
-			field = "detector.panel.snrN"
+	return r.reads(d)
+}
+
+// reads gives the same receptor that is to read what d asks of it.
+func (r receptor) reads(d plan.Detector) (receptor, error) {
+	field := "detector.plate.snrN"
+	switch {
+	case d.Film != nil:
+		r.density = d.Film.Density
+		if most := r.film.MostDensity(); r.density >= most {
+			return r, &plan.FieldError{Field: "detector.film.density", Value: fmt.Sprint(r.density), Problem: "is beyond what the film reaches",
+				Allowed: fmt.Sprintf("%.2f to %.2f", r.film.BaseAndFog, most), Mend: "take a lower density"}
 		}
+		return r, nil
+	case d.Plate != nil:
+		r.snrN = d.Plate.SNRn
+	case d.Panel != nil:
+		r.snrN, field = d.Panel.SNRn, "detector.panel.snrN"
+	}
+	if r.snrN >= r.digital.MostSNRn() {
 		return r, &plan.FieldError{Field: field, Value: fmt.Sprint(r.snrN), Problem: "is beyond what the detector reaches at any dose",
 			Allowed: fmt.Sprintf("less than %g", r.digital.MostSNRn()), Mend: "take a lower signal to noise ratio"}
 	}

@@ -41,18 +41,20 @@ func Slab(layers []Layer, keV, perCM2 []float64) (Exit, error) {
 	if err := checkSpectrum(keV, perCM2); err != nil {
 		return Exit{}, err
 	}
-	s := newStack(layers, keV)
+	layers = merged(layers)
 	out := Exit{Primary: make([]float64, len(keV)), EdgesKeV: slices.Clone(photon.ExitEdgesKeV),
 		MeanKeV: make([]float64, exitBins), Scatter: make([]float64, exitBins)}
-	for i, n := range perCM2 {
-		out.Primary[i] = n * math.Exp(-s.upTo[len(s.upTo)-1][i])
-	}
-	sc := s.scatter(keV, perCM2)
+	out.pass(layers, keV, perCM2)
+	e, n := condensed(keV, perCM2)
+	sc := newStack(layers, e).scatter(e, n)
 	var kerma float64
 	for i := range sc.flux {
 		out.MeanKeV[i] = (photon.ExitEdgesKeV[i] + photon.ExitEdgesKeV[i+1]) / 2
 		if f := sc.flux[i]; f > 0 {
-			out.Scatter[i], out.MeanKeV[i] = f, sc.keV[i]/f
+			// The sums of photons and of energy are interpolated each for
+			// itself; in a nearly empty bin their ratio may leave it.
+			out.Scatter[i] = f
+			out.MeanKeV[i] = min(max(sc.keV[i]/f, photon.ExitEdgesKeV[i]), photon.ExitEdgesKeV[i+1])
 			kerma += f * photon.KermaPerFluence(out.MeanKeV[i])
 		}
 	}
@@ -99,17 +101,64 @@ type stack struct {
 	upTo   [][]float64 // and of all layers up to and with it
 }
 
-// newStack merges neighbours of one material.
-func newStack(layers []Layer, keV []float64) *stack {
-	s := &stack{}
+// merged joins neighbours of one material and leaves out what has no thickness.
+func merged(layers []Layer) []Layer {
+	var out []Layer
 	for _, l := range layers {
-		if n := len(s.layers); n > 0 && s.layers[n-1].Material == l.Material {
-			s.layers[n-1].MM += l.MM
+		if n := len(out); n > 0 && out[n-1].Material == l.Material {
+			out[n-1].MM += l.MM
+		} else if l.MM > 0 {
+			out = append(out, l)
+		}
+	}
+	return out
+}
+
+// pass fills in the primary.
+func (x *Exit) pass(layers []Layer, keV, perCM2 []float64) {
+	mu := make([]float64, len(keV))
+	for _, l := range layers {
+		l.Material.MuPerMMInto(mu, keV)
+		for i, m := range mu {
+			x.Primary[i] += m * l.MM
+		}
+	}
+	for i, n := range perCM2 {
+		x.Primary[i] = n * math.Exp(-x.Primary[i])
+	}
+}
+
+// condensed joins neighbouring energies that lie within 1 %, for the scatter,
+// which changes slowly with energy: at 10 mean free paths that moves it by
+// less than 0.2 %.
+func condensed(keV, perCM2 []float64) (e, n []float64) {
+	e, n = make([]float64, 0, len(keV)), make([]float64, 0, len(keV))
+	var first, photons, energy float64
+	flush := func() {
+		if photons > 0 {
+			e, n = append(e, energy/photons), append(n, photons)
+		}
+		photons, energy = 0, 0
+	}
+	for i, k := range keV {
+		if k < CutKeV || perCM2[i] == 0 {
 			continue
 		}
-		s.layers = append(s.layers, l)
+		if k > first*1.01 || k < first {
+			flush()
+			first = k
+		}
+		photons += perCM2[i]
+		energy += perCM2[i] * k
 	}
-	for j, l := range s.layers {
+	flush()
+	return e, n
+}
+
+// newStack finds the optical depths.
+func newStack(layers []Layer, keV []float64) *stack {
+	s := &stack{layers: layers}
+	for j, l := range layers {
 		x := make([]float64, len(keV))
 		l.Material.MuPerMMInto(x, keV)
 		sum := make([]float64, len(keV))
@@ -125,44 +174,62 @@ func newStack(layers []Layer, keV []float64) *stack {
 	return s
 }
 
-// scatter combines the layers: behind layer j stands what a slab wholly of its
-// material and as many mean free paths thick as all layers so far would send
-// out, plus what the layers before it sent into it more (or less) than a slab
-// of its material would have, carried through it. For layers of one material
-// that is exact.
+// scatter combines the layers. Behind layer j comes what the primary makes in
+// it and what earlier layers sent into it, carried through. That leaves out
+// photons that cross the border more than once. How much they are is known
+// where all layers so far were of the last one's material: the table for the
+// whole depth against the same sum. That ratio, bin by bin, mends the sum; in
+// part only if the layer before absorbs more, since it returns less.
 func (s *stack) scatter(keV, perCM2 []float64) spread {
 	var now spread
-	for j := range s.layers {
-		b := blendOf(s.layers[j].Material)
-		next := single(b, keV, perCM2, s.upTo[j])
-		if j > 0 {
-			before := single(b, keV, perCM2, s.upTo[j-1])
-			carried := now.minus(&before).through(s.layers[j], b)
-			next.plus(carried)
-			next.err2 = max(next.err2, now.err2)
+	primary := make([]float64, len(keV))
+	for j, l := range s.layers {
+		b := blendOf(l.Material)
+		if j == 0 {
+			now = single(b, keV, perCM2, s.upTo[0])
+			continue
 		}
-		next.clamp()
+		for i, n := range perCM2 {
+			primary[i] = n * math.Exp(-s.upTo[j-1][i])
+		}
+		fresh := single(b, keV, primary, s.own[j])
+		whole := single(b, keV, perCM2, s.upTo[j])
+		alike := single(b, keV, perCM2, s.upTo[j-1])
+		alike = alike.through(l, b)
+		alike.plus(&fresh)
+		next := now.through(l, b)
+		next.plus(&fresh)
+		next.mend(&whole, &alike, returning(s.layers[j-1].Material, l.Material))
+		next.err2 = max(now.err2, whole.err2)
 		now = next
 	}
 	return now
 }
 
-func single(b *blend, keV, perCM2, x []float64) spread {
-	f := newFold()
-	for i, e := range keV {
-		if e >= CutKeV {
-			f.add(b, e, x[i], perCM2[i])
-		}
-	}
-	return f.result()
+// returning is the power of the mending ratio: 1, down to 1/2 as the layer
+// before absorbs more than the layer itself.
+func returning(before, own *materials.Material) float64 {
+	const keV = 100
+	return 1 - 0.5*max(0, min(1, absorbing(before, keV)-absorbing(own, keV)))
 }
 
-func (a *spread) minus(b *spread) *spread {
-	d := &spread{}
+// mend multiplies each bin by (whole/alike)^power.
+func (a *spread) mend(whole, alike *spread, power float64) {
 	for i := range a.flux {
-		d.flux[i], d.keV[i] = a.flux[i]-b.flux[i], a.keV[i]-b.keV[i]
+		if whole.flux[i] > 0 && alike.flux[i] > 0 {
+			r := math.Pow(max(0.3, min(3, whole.flux[i]/alike.flux[i])), power)
+			a.flux[i] *= r
+			a.keV[i] *= r
+		}
 	}
-	return d
+}
+
+func single(b *blend, keV, perCM2, x []float64) spread {
+	f := newFold()
+	for i := len(keV) - 1; i >= 0; i-- { // the hard ones first, see spent
+		f.add(b, keV[i], x[i], perCM2[i])
+	}
+	return f.result()
 }
 
 func (a *spread) plus(b *spread) {
@@ -172,41 +239,30 @@ func (a *spread) plus(b *spread) {
 	}
 }
 
-func (a *spread) clamp() {
-	for i := range a.flux {
-		if !(a.flux[i] > 0 && a.keV[i] > 0) {
-			a.flux[i], a.keV[i] = 0, 0
-		}
-	}
+// slanted gives the share of scattered photons that pass x mean free paths of
+// thickness uncollided, and the path that one direction would need for that.
+// Their fluence is taken as proportional to the cosine; Gauss' rule of three points.
+func slanted(x float64) (share, path float64) {
+	share = 0.1396540*math.Exp(-x/0.2123405) + 0.4584822*math.Exp(-x/0.5905331) + 0.4018638*math.Exp(-x/0.9114120)
+	return share, -math.Log(share)
 }
 
-// slant is the path of scattered photons through a layer over its thickness.
-const slant = 1.6
-
-// through carries scattered photons, or a difference of such, through a layer:
-// attenuated along a slanted path, with the scatter that they make in turn.
-func (a *spread) through(l Layer, b *blend) *spread {
-	out := &spread{}
-	up, down := newFold(), newFold()
+// through carries scattered photons through a layer, with the scatter that
+// they make in turn.
+func (a *spread) through(l Layer, b *blend) spread {
+	var out spread
+	again := newFold()
 	for i, n := range a.flux {
 		if n == 0 {
 			continue
 		}
-		e := (photon.ExitEdgesKeV[i] + photon.ExitEdgesKeV[i+1]) / 2
-		if m := a.keV[i] / n; m > photon.ExitEdgesKeV[i] && m < photon.ExitEdgesKeV[i+1] {
-			e = m
-		}
-		x := l.Material.MuPerMM(e) * l.MM * slant
-		v := n * math.Exp(-x)
-		out.flux[i] += v
-		out.keV[i] += v * e
-		if n > 0 {
-			up.add(b, e, x, n)
-		} else {
-			down.add(b, e, x, -n)
-		}
+		e := a.keV[i] / n
+		share, path := slanted(l.Material.MuPerMM(e) * l.MM)
+		out.flux[i] += n * share
+		out.keV[i] += n * share * e
+		again.add(b, e, path, n)
 	}
-	plus, minus := up.result(), down.result()
-	out.plus(plus.minus(&minus))
+	made := again.result()
+	out.plus(&made)
 	return out
 }
