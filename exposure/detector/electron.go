@@ -41,7 +41,7 @@ func comptonKeV(keV float64) float64 {
 	total := (1+a)/(a*a)*(2*(1+a)/(1+2*a)-l/a) + l/(2*a) - (1+3*a)/((1+2*a)*(1+2*a))
 	scattered := l/(a*a*a) + 2*(1+a)*(2*a*a-2*a-1)/(a*a*(1+2*a)*(1+2*a)) + 8*a*a/(3*(1+2*a)*(1+2*a)*(1+2*a))
 	if a < 0.002 { // the closed forms cancel; first terms of their series
-		return keV * a * (1 - 4.2*a)
+		return keV * a * (1 - 2.2*a)
 	}
 	return keV * (1 - scattered/(2*total))
 }
