@@ -72,7 +72,7 @@ Ask an administrator to run: apt-get install --no-install-recommends $lack"
 }
 
 # What the window, and drawing without one, are built and run with on Linux.
-window_packages="gcc libc6-dev pkg-config libegl-dev libgles2 libx11-dev libxcursor-dev libxkbcommon-x11-dev libx11-xcb-dev"
+window_packages="ca-certificates gcc libc6-dev pkg-config libegl-dev libgles2 libx11-dev libxcursor-dev libxkbcommon-x11-dev libx11-xcb-dev"
 
 # build_app OUTPUT builds the program; a warm second build takes seconds.
 build_app() {
