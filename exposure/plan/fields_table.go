@@ -4,7 +4,7 @@ import "slices"
 
 // table is every field of a plan file. Another part of the program that adds a
 // field to the types adds its row here, or a list of its own to the Concat.
-var table = slices.Concat(topFields, tubeFields, sealedFields, partFields, setupFields, detectorFields, siteFields, sitePlanFields)
+var table = slices.Concat(topFields, tubeFields, sealedFields, partFields, setupFields, detectorFields, filmDataFields, siteFields, sitePlanFields, uncertaintyFields)
 
 var topFields = []Field{
 	{Path: "plan", Kind: Number, Required: true, Min: 1, Max: 1, Step: 1, Meaning: "version of the plan file"},

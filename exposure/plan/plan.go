@@ -25,6 +25,8 @@ type Plan struct {
 	Detector Detector  `json:"detector"`       // what records the image
 	Rules    string    `json:"rules,omitzero"` // name of a rule set, "iso17636-1:2013/B"; empty: none
 	Site     Site      `json:"site,omitzero"`  // boundary limits and use of the beam
+
+	Uncertainty Uncertainty `json:"uncertainty,omitzero"` // how well the inputs are known; default by input
 }
 
 // Source is a tube head or a sealed source: exactly one pointer is set.
@@ -112,6 +114,7 @@ type Film struct {
 	Class     string      `json:"class"`               // C1 to C6
 	Density   float64     `json:"density"`             // wanted optical density, base and fog included, 1.0 to 4.5
 	ScreensMM *[2]float64 `json:"screensMM,omitempty"` // lead screens front and back, mm; 0 none; default none
+	Data      FilmData    `json:"data,omitzero"`       // the make's own figures in place of its class's
 }
 
 // Site is the boundary's part of the plan.
