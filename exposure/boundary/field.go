@@ -47,8 +47,8 @@ type Field struct {
 	credited             bool    // every ray of the cone is proved to pass the part
 	part                 Vec     // where the beam meets it
 	scatterAt1m          []float64
-	skyBeam              []float64 // by degree from the axis, uSv/h m
-	skyAllRound, skyLeak float64
+	skyBeam, skyAllRound *sky
+	leakShare            float64 // leakage to open beam
 	shields              *shields
 	patches, barePatches []patch
 	ground, bareGround   *around
@@ -163,14 +163,13 @@ func (f *Field) scattered(half float64) error {
 		return err
 	}
 	f.scatterAt1m = byDeg
-	f.skyBeam = skyOf(in.Spectrum, half)
-	allRound := skyOf(in.Spectrum, 180)[0] * scale
-	for i := range f.skyBeam {
-		f.skyBeam[i] *= scale
+	f.skyBeam = newSky(in.Spectrum, half, scale)
+	f.skyAllRound = f.skyBeam
+	if half < 90 {
+		f.skyAllRound = newSky(in.Spectrum, 180, scale)
 	}
-	f.skyAllRound = allRound
 	if f.openAt1m > 0 {
-		f.skyLeak = allRound * f.leakAt1m / f.openAt1m
+		f.leakShare = f.leakAt1m / f.openAt1m
 	}
 	ground, err := newReflection(groundMaterial, in.Spectrum, scale)
 	if err != nil {
@@ -242,7 +241,7 @@ func (f *Field) exposed(q Vec, traced bool) Parts {
 	r := math.Sqrt(r2)
 	cos := way.dot(f.axis) / r
 	var p Parts
-	pass := f.shields.pass(f.focus, q, ofBeam)
+	pass, passLeak := f.shields.passBoth(f.focus, q)
 	inBeam := cos >= f.cosHalf
 	open := f.openAt1m
 	if f.credited || (traced && inBeam && f.meetsPart(way, cos)) {
@@ -251,21 +250,29 @@ func (f *Field) exposed(q Vec, traced bool) Parts {
 	if inBeam {
 		p.Beam = open / r2 * pass
 	}
-	passLeak := pass
-	if f.leakAt1m > 0 {
-		passLeak = f.shields.pass(f.focus, q, ofLeakage)
-		p.Leakage = f.leakAt1m / r2 * passLeak
-	}
+	p.Leakage = f.leakAt1m / r2 * passLeak
 	if !f.noScatter {
 		p.Scatter = f.offPart(q)
 		p.Ground = f.offGround(q, f.ground, f.patches)
-		sky := inTable(f.skyBeam, acosDeg(cos)) / r
-		if inBeam {
-			sky = min(sky, f.openAt1m/r2/2) * (1 - pass)
-		}
-		p.Sky = sky + min(f.skyLeak/r, f.leakAt1m/r2/2)*(1-passLeak)
+		p.Sky = f.offAir(r, cos, inBeam, pass, passLeak)
 	}
 	return p.times(f.factor)
+}
+
+// offAir is the air scatter at r from the focus. In the beam it fills what walls
+// take off: in the open it is part of a beam of which the air takes nothing off.
+func (f *Field) offAir(r, cos float64, inBeam bool, pass, passLeak float64) float64 {
+	var h float64
+	switch {
+	case !inBeam:
+		h = f.skyBeam.rate(acosDeg(cos), r)
+	case pass < 1:
+		h = min(f.skyBeam.rate(acosDeg(cos), r), f.openAt1m/(2*r*r)) * (1 - pass)
+	}
+	if passLeak < 1 {
+		h += min(f.skyAllRound.rate(0, r)*f.leakShare, f.leakAt1m/(2*r*r)) * (1 - passLeak)
+	}
+	return h
 }
 
 func (p Parts) times(k float64) Parts {

@@ -139,13 +139,12 @@ func (sh *shields) follow(list []patch, from, d Vec, omega float64, ground *refl
 }
 
 // around is the field of the patches on one level, tabled round the source.
-// Between nodes it is never less than at the largest of the nodes near by, so
-// that it errs outward.
+// Each node holds the largest of the nodes round it, so that between nodes it
+// errs outward, and it falls with distance on every bearing.
 type around struct {
 	centre     Vec
 	bearingDeg float64
 	lnR2H      []float64 // aroundBearings by aroundRadii
-	slope      float64   // largest |d ln(r2 H) / d ln r|
 }
 
 const (
@@ -154,6 +153,8 @@ const (
 	aroundFirstM   = 0.5
 	aroundRatio    = 1.5
 )
+
+var lnAroundRatio = math.Log(aroundRatio)
 
 func newAround(centre Vec, bearingDeg, levelM float64, patches []patch, sh *shields) *around {
 	raw := make([]float64, aroundBearings*aroundRadii)
@@ -169,17 +170,17 @@ func newAround(centre Vec, bearingDeg, levelM float64, patches []patch, sh *shie
 	}
 	a := &around{centre: centre, bearingDeg: bearingDeg, lnR2H: make([]float64, len(raw))}
 	for b := range aroundBearings {
-		for k := range aroundRadii {
+		for k := aroundRadii - 1; k >= 0; k-- {
 			m := math.Inf(-1)
 			for _, db := range []int{aroundBearings - 1, 0, 1} {
 				for dk := max(0, k-1); dk <= min(aroundRadii-1, k+1); dk++ {
 					m = max(m, raw[(b+db)%aroundBearings*aroundRadii+dk])
 				}
 			}
-			a.lnR2H[b*aroundRadii+k] = m
-			if k > 0 {
-				a.slope = max(a.slope, math.Abs(m-a.lnR2H[b*aroundRadii+k-1])/math.Log(aroundRatio))
+			if k < aroundRadii-1 { // never less than farther out
+				m = max(m, a.lnR2H[b*aroundRadii+k+1]-2*lnAroundRatio)
 			}
+			a.lnR2H[b*aroundRadii+k] = m
 		}
 	}
 	return a
@@ -202,7 +203,7 @@ func patchesRate(patches []patch, q Vec, sh *shields) float64 {
 func (a *around) rate(q Vec) float64 {
 	dx, dy := q.X-a.centre.X, q.Y-a.centre.Y
 	r2 := max(dx*dx+dy*dy, aroundFirstM*aroundFirstM)
-	k := min(math.Log(r2/(aroundFirstM*aroundFirstM))/(2*math.Log(aroundRatio)), aroundRadii-1)
+	k := min(math.Log(r2/(aroundFirstM*aroundFirstM))/(2*lnAroundRatio), aroundRadii-1)
 	b := (math.Atan2(dx, dy)*180/math.Pi - a.bearingDeg) / 360
 	b = (b - math.Floor(b)) * aroundBearings
 	k0, b0 := min(int(k), aroundRadii-2), int(b)%aroundBearings

@@ -129,9 +129,26 @@ func (l *leg) hit(p, d Vec) (at, oblique float64, ok bool) {
 // taken as it is and the others at their last, least slope, and of these
 // figures the largest: beam hardened by one wall passes the next more easily.
 func (sh *shields) pass(p, q Vec, quality quality) float64 {
-	d := q.minus(p)
 	var mm [mostMaterials]float64
-	any := false
+	if !sh.path(p, q, &mm) && sh.air[quality] == nil {
+		return 1
+	}
+	return sh.through(&mm, q.distance(p)*sh.airScale, quality)
+}
+
+// passBoth is pass for beam and leakage.
+func (sh *shields) passBoth(p, q Vec) (ofTheBeam, ofTheLeakage float64) {
+	var mm [mostMaterials]float64
+	if !sh.path(p, q, &mm) && sh.air[ofBeam] == nil {
+		return 1, 1
+	}
+	air := q.distance(p) * sh.airScale
+	return sh.through(&mm, air, ofBeam), sh.through(&mm, air, ofLeakage)
+}
+
+// path adds up the walls between p and q by material, mm along the ray.
+func (sh *shields) path(p, q Vec, mm *[mostMaterials]float64) (any bool) {
+	d := q.minus(p)
 	for i := range sh.legs {
 		l := &sh.legs[i]
 		if l.material < 0 {
@@ -142,10 +159,7 @@ func (sh *shields) pass(p, q Vec, quality quality) float64 {
 			any = true
 		}
 	}
-	if !any && sh.air[quality] == nil {
-		return 1
-	}
-	return sh.through(&mm, d.length()*sh.airScale, quality)
+	return any
 }
 
 func (sh *shields) through(mm *[mostMaterials]float64, airMM float64, q quality) float64 {
