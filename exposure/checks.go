@@ -8,7 +8,6 @@ import (
 	"halfvalue/exposure/plan"
 	"halfvalue/exposure/rules"
 	"halfvalue/exposure/setup"
-	"halfvalue/exposure/working"
 )
 
 // WithRules checks plans by another table of rule sets: ours with a company's
@@ -48,8 +47,7 @@ func (s *shot) check(r *Reckoning) error {
 			}
 		}
 		r.Checks = append(r.Checks, check)
-		r.Workings = append(r.Workings, working.Step{ID: "check." + c.ID, Name: c.Title, Formula: c.Rule, Value: c.Value, Unit: c.Unit, Source: c.Source(),
-			Note: string(c.Verdict) + ": " + c.Text, Inputs: []working.Input{{Symbol: "limit", Name: "limit", Value: c.Limit, Unit: c.Unit, Source: c.Source()}}})
+		r.Workings = append(r.Workings, c.Step())
 	}
 	return nil
 }

@@ -1,6 +1,10 @@
 package rules
 
-import "fmt"
+import (
+	"fmt"
+
+	"halfvalue/exposure/working"
+)
 
 // Verdict of a check.
 type Verdict string
@@ -25,6 +29,20 @@ type Check struct {
 	Clause     string // "ISO 17636-1:2013, 7.6"
 	Confidence string // one of Confidences
 	From       string // company file; "" for ours
+	Formula    string // how Value and Limit came about; "" where a table was read
+	Inputs     []working.Input
+}
+
+// Step is the working of the check.
+func (c Check) Step() working.Step {
+	formula := c.Formula
+	if formula == "" {
+		formula = "read in the table of the rule"
+	}
+	limit := in("limit", "limit", c.Limit, c.Unit)
+	limit.Source = c.Source()
+	return working.Step{ID: "check." + c.ID, Name: c.Title, Formula: formula, Inputs: append([]working.Input{limit}, c.Inputs...),
+		Value: c.Value, Unit: c.Unit, Source: c.Source(), Note: string(c.Verdict) + ": " + c.Text + "; the rule: " + c.Rule}
 }
 
 // Source cites the check for a working: document, clause, confidence, that the
@@ -104,7 +122,7 @@ func noFamily(f Facts) string {
 }
 
 func (r Row) finish(j judgement) Check {
-	c := Check{ID: r.ID, Title: r.Title, Verdict: j.verdict, Value: j.value, Limit: j.limit, Unit: j.unit, Text: j.text, Rule: r.Text, Clause: r.Document + ", " + r.Clause, Confidence: r.Confidence, From: r.From}
+	c := Check{ID: r.ID, Title: r.Title, Verdict: j.verdict, Value: j.value, Limit: j.limit, Unit: j.unit, Text: j.text, Rule: r.Text, Clause: r.Document + ", " + r.Clause, Confidence: r.Confidence, From: r.From, Formula: j.formula, Inputs: j.inputs}
 	switch {
 	case r.Confidence == "low":
 		c.Verdict = Undecided

@@ -57,7 +57,9 @@ func (c Cone) judge(f Facts) judgement {
 	if !ok {
 		return judgement{verdict: Undecided, limit: limit, unit: "deg", text: say("cone %g deg: what a shot takes depends on the number planned, which is not stated", f.ConeDeg)}
 	}
-	return judgement{atMost(need, limit), need, limit, "deg", say("a shot takes %.4g deg across the pipe, the cone has %g deg", need, f.ConeDeg)}
+	j := judgement{verdict: atMost(need, limit), value: need, limit: limit, unit: "deg", text: say("a shot takes %.4g deg across the pipe, the cone has %g deg", need, f.ConeDeg)}
+	return j.with("2 arctan(R sin p/(e + R cos p)), p = 180/N; e - R cos p for the near wall; 2 arcsin(R/e) where both walls show",
+		in("R", "outside radius", f.Setup.Pipe.Outer(), "mm"), in("e", "source off the axis", f.Setup.FromAxisMM, "mm"), in("N", "shots planned", float64(f.Shots), ""))
 }
 
 func (c Cone) knobs(Facts) []knob {

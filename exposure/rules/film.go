@@ -100,7 +100,8 @@ func (s spreadRule) judge(f Facts) judgement {
 		rel = append(rel, Density{d.At, 100 * (d.Value/ref - 1)})
 	}
 	at, limit, v := s.worst(rel)
-	return judgement{verdict: v, value: at.Value, limit: limit, unit: "%", text: say("density at %q is %+.0f %% of that at the part, %s %%", at.At, at.Value, s.said())}
+	return judgement{verdict: v, value: at.Value, limit: limit, unit: "%", text: say("density at %q is %+.0f %% of that at the part, %s %%", at.At, at.Value, s.said())}.
+		with("100 (D/D_part - 1)", in("D_part", "density at the part", ref, ""))
 }
 
 func (s spreadRule) knobs(Facts) []knob { return []knob{rising("source.tube.kv")} }
@@ -250,12 +251,12 @@ func (s Screens) judge(f Facts) judgement {
 			text := say("%s screen %g mm lead, %g to %g mm", name, mm, side[0], side[1])
 			switch {
 			case atLeast(mm, side[0]) == Short:
-				return judgement{Short, mm, side[0], "mm", text}
+				return judgement{verdict: Short, value: mm, limit: side[0], unit: "mm", text: text}
 			case atMost(mm, side[1]) == Short:
-				return judgement{Short, mm, side[1], "mm", text}
+				return judgement{verdict: Short, value: mm, limit: side[1], unit: "mm", text: text}
 			}
 		}
-		return judgement{Holds, f.ScreensMM[0], r.Front[1], "mm", say("screens %g and %g mm lead, front %g to %g mm, back %g to %g mm", f.ScreensMM[0], f.ScreensMM[1], r.Front[0], r.Front[1], r.Back[0], r.Back[1])}
+		return judgement{verdict: Holds, value: f.ScreensMM[0], limit: r.Front[1], unit: "mm", text: say("screens %g and %g mm lead, front %g to %g mm, back %g to %g mm", f.ScreensMM[0], f.ScreensMM[1], r.Front[0], r.Front[1], r.Back[0], r.Back[1])}
 	}
 	return judgement{verdict: Undecided, unit: "mm", text: "the rule has no screens for this beam and thickness"}
 }

@@ -50,7 +50,9 @@ func (m MinF) judge(f Facts) judgement {
 	b := m.bMM(g)
 	least := m.LeastMM(g.DMM, b)
 	j := judgement{value: g.FMM, limit: least, unit: "mm", verdict: atLeast(g.FMM, least),
-		text: say("f %.4g mm, at least %.4g mm for d %g mm and b %g mm", g.FMM, least, g.DMM, b)}
+		text: say("f %.4g mm, at least %.4g mm for d %g mm and b %g mm", g.FMM, least, g.DMM, b)}.
+		with(say("f >= %g d b^%.4g; b below %g t counts as t, De where both walls show", m.Coefficient, m.Power, m.TouchFactor),
+			in("f", "source to part", g.FMM, "mm"), in("d", "source size", g.DMM, "mm"), in("b", "part to film as counted", b, "mm"), in("t", "nominal thickness", g.TMM, "mm"))
 	share := 1.0
 	if inside := g.Kind == plan.Panoramic || g.Side == plan.Inside; inside && g.Pipe.ODMM > 0 {
 		share = m.InsideShare
@@ -109,7 +111,8 @@ func (m MaxUg) limit(t float64) float64 {
 func (m MaxUg) judge(f Facts) judgement {
 	limit := m.limit(f.Setup.TMM)
 	return judgement{value: f.Setup.UgMM, limit: limit, unit: "mm", verdict: atMost(f.Setup.UgMM, limit),
-		text: say("Ug %.3g mm, at most %.3g mm at %g mm", f.Setup.UgMM, limit, f.Setup.TMM)}
+		text: say("Ug %.3g mm, at most %.3g mm at %g mm", f.Setup.UgMM, limit, f.Setup.TMM)}.
+		with("Ug = d b/f", in("d", "source size", f.Setup.DMM, "mm"), in("b", "part to film", f.Setup.BMM, "mm"), in("f", "source to part", f.Setup.FMM, "mm"))
 }
 
 func (m MaxUg) knobs(Facts) []knob {
@@ -139,7 +142,8 @@ func (r Rise) judge(f Facts) judgement {
 		if beam := 2 * setup.ConeRadiusMM(f.ConeDeg, g.SFDMM); f.ConeDeg > 0 && beam < most {
 			most, text = beam, say("read at most %.4g mm of film, the beam reaches no further", beam)
 		}
-		return judgement{verdict: Undecided, limit: most, unit: "mm", text: text + ": the length that is read is not in the plan"}
+		return judgement{verdict: Undecided, limit: most, unit: "mm", text: text + ": the length that is read is not in the plan"}.
+			with("length = 2 SFD sqrt(K^2 - 1), within the cone", in("K", "thickness rise", r.K, ""), in("SFD", "source to film", g.SFDMM, "mm"), in("cone", "full opening", f.ConeDeg, "deg"))
 	}
 	s, err := g.Pipe.ShotsAround(g.Ring(), g.FromAxisMM, r.K)
 	if err != nil {
@@ -150,7 +154,17 @@ func (r Rise) judge(f Facts) judgement {
 	if f.Shots == 0 {
 		j.verdict, j.text = Undecided, say("%d shots needed round the pipe (%.2f): the number planned is not stated", s.N, s.Exact)
 	}
-	return j
+	return j.with(ringFormula[g.Ring()], in("K", "thickness rise", r.K, ""), in("t", "wall", g.Pipe.WallMM, "mm"), in("De", "outside diameter", g.Pipe.ODMM, "mm"),
+		in("e", "source off the axis", g.FromAxisMM, "mm"), in("theta", "angle at the outer surface", deg(s.Theta), "deg"), in("eta", "angle at the source", deg(s.Eta), "deg"), in("N", "not rounded", s.Exact, ""))
+}
+
+const thetaEta = "theta = arccos([1 + (K^2 - 1) t/De]/K), eta = arcsin(sin theta De/(2 e))"
+
+// ringFormula is the number of shots by where the source stands.
+var ringFormula = map[setup.Ring]string{
+	setup.Far:        "N = 180/(theta + eta), 1 where eta has no value; " + thetaEta,
+	setup.Near:       "N = 180/(theta - eta); " + thetaEta,
+	setup.NearInside: "N = 180/(eta - theta), 1 where eta has no value; " + thetaEta,
 }
 
 func (r Rise) knobs(f Facts) []knob {

@@ -127,6 +127,12 @@ func TestLowConfidenceDecidesNothing(t *testing.T) {
 				if math.IsNaN(c.Value) || math.IsInf(c.Value, 0) || math.IsNaN(c.Limit) || math.IsInf(c.Limit, 0) || c.Text == "" || c.Rule == "" || c.Source() == "" {
 					t.Fatalf("%s: %+v", name, c)
 				}
+				step := c.Step()
+				for _, i := range step.Inputs {
+					if math.IsNaN(i.Value) || math.IsInf(i.Value, 0) || i.Symbol == "" || i.Name == "" {
+						t.Fatalf("%s: %+v", name, step)
+					}
+				}
 				if c.recalled() && !strings.Contains(c.Source(), edition) {
 					t.Fatalf("%s: %+v does not send to the edition", name, c)
 				}

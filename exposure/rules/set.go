@@ -10,6 +10,7 @@ import (
 	"github.com/go-json-experiment/json"
 
 	"halfvalue/exposure/rules/data"
+	"halfvalue/exposure/working"
 )
 
 // Set is the rules of one document and class.
@@ -71,6 +72,18 @@ type judgement struct {
 	value, limit float64
 	unit         string
 	text         string
+	formula      string // what value is held against limit, for the working
+	inputs       []working.Input
+}
+
+// with adds what an auditor needs to follow the figure.
+func (j judgement) with(formula string, inputs ...working.Input) judgement {
+	j.formula, j.inputs = formula, inputs
+	return j
+}
+
+func in(symbol, name string, value float64, unit string) working.Input {
+	return working.Input{Symbol: symbol, Name: name, Value: value, Unit: unit}
 }
 
 // rule is the figures of a row.

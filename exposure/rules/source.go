@@ -42,16 +42,16 @@ func (n Nuclides) judge(f Facts) judgement {
 	text := say("%s through %s mm, for %g to %g mm", f.Nuclide, extent(f.ThinMM, f.ThickMM, "%.4g"), r.FromMM, r.ToMM)
 	switch {
 	case atMost(f.ThickMM, r.ToMM) == Short:
-		return judgement{Short, f.ThickMM, r.ToMM, "mm", text}
+		return judgement{verdict: Short, value: f.ThickMM, limit: r.ToMM, unit: "mm", text: text}
 	case atLeast(f.ThinMM, r.FromMM) == Short:
-		j := judgement{Short, f.ThinMM, r.FromMM, "mm", text}
+		j := judgement{verdict: Short, value: f.ThinMM, limit: r.FromMM, unit: "mm", text: text}
 		if r.AgreedMM > 0 && atLeast(f.ThinMM, r.AgreedMM) == Holds {
 			j.verdict = Undecided
 			j.text += say("; from %g mm by agreement", r.AgreedMM)
 		}
 		return j
 	}
-	return judgement{Holds, f.WMM, r.ToMM, "mm", text}
+	return judgement{verdict: Holds, value: f.WMM, limit: r.ToMM, unit: "mm", text: text}
 }
 
 func (n Nuclides) knobs(Facts) []knob { return nil }
@@ -103,7 +103,8 @@ func (m MaxKV) judge(f Facts) judgement {
 		limit += m.RiseKV
 		text += say(", %g kV more where the thickness varies", m.RiseKV)
 	}
-	return judgement{atMost(f.KV, limit), f.KV, limit, "kV", text}
+	return judgement{verdict: atMost(f.KV, limit), value: f.KV, limit: limit, unit: "kV", text: text}.
+		with("straight on log axes between the points of the curve", in("w", "penetrated thickness", f.WMM, "mm"), in("U", "tube voltage", f.KV, "kV"))
 }
 
 func (m MaxKV) knobs(Facts) []knob { return []knob{falling("source.tube.kv")} }
@@ -128,7 +129,7 @@ func (t Travel) judge(f Facts) judgement {
 	if f.TravelShare == 0 {
 		j.verdict, j.text = Undecided, say("at most %g %% of the exposure for travel: guide tube and crank are not stated", 100*t.MostShare)
 	}
-	return j
+	return j.with("share = 2 tube/(speed x exposure time), out and back")
 }
 
 func (t Travel) knobs(Facts) []knob {

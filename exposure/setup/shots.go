@@ -33,9 +33,14 @@ type Shots struct {
 // Theta is the angle, rad, between a ray and the normal at the outer surface of
 // a pipe at which its path in the wall is k times the wall:
 // cos theta = [1 + (k^2-1) t/De]/k, exact (law of cosines). Beyond it the path is
-// longer. k must be above 1.
+// longer. k must be above 1. Where the wall is so thick that no ray into the
+// bore passes k walls, t/De above 1/(1+k^2), it is the angle of the ray that
+// touches the bore: beyond it there is no bore to speak of.
 func (p Pipe) Theta(k float64) float64 {
-	return math.Acos(min(1, (1+(k*k-1)*p.WallMM/p.ODMM)/k))
+	if (1+k*k)*p.WallMM >= p.ODMM {
+		return math.Asin(p.Inner() / p.Outer())
+	}
+	return math.Acos((1 + (k*k-1)*p.WallMM/p.ODMM) / k)
 }
 
 // ShotsAround gives the number of shots round the pipe with the source
@@ -72,10 +77,16 @@ func (p Pipe) ShotsAround(way Ring, fromAxisMM, k float64) (Shots, error) {
 		}
 	}
 	s.Exact = 180 / s.HalfDeg
+	if !(s.Exact <= mostShots) {
+		return Shots{}, fmt.Errorf("source %v mm off the axis of a pipe %v x %v mm is so near the wall that a run takes more than %d shots", fromAxisMM, p.ODMM, p.WallMM, mostShots)
+	}
 	s.N = wholeUp(s.Exact)
 	s.PitchDeg = 360 / float64(s.N)
 	return s, nil
 }
+
+// mostShots bounds a run that anybody would shoot.
+const mostShots = 10000
 
 // wholeUp rounds up; a number that is whole on paper stays.
 func wholeUp(x float64) int { return int(math.Ceil(x * (1 - 1e-12))) }

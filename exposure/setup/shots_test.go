@@ -87,6 +87,9 @@ func TestCoverage(t *testing.T) {
 		p := Pipe{40 + 600*rng.Float64(), 0}
 		p.WallMM = p.ODMM * (0.01 + 0.12*rng.Float64())
 		k := []float64{1.1, 1.2}[rng.IntN(2)]
+		if rng.IntN(10) == 0 {
+			p.WallMM = p.ODMM * (0.13 + 0.36*rng.Float64())
+		}
 		way := Ring(rng.IntN(3))
 		axis := p.Outer() * (1.02 + 4*rng.Float64())
 		if way == NearInside {
@@ -101,7 +104,7 @@ func TestCoverage(t *testing.T) {
 		if got := worst(p, way, axis, s.N); got > k*(1+1e-9) {
 			t.Fatalf("%+v way %d, source %v off the axis, K %v: %d shots leave a place at %v walls", p, way, axis, k, s.N, got)
 		}
-		if s.N > 1 {
+		if s.N > 1 && (1+k*k)*p.WallMM < p.ODMM {
 			if got := worst(p, way, axis, s.N-1); got <= k {
 				t.Fatalf("%+v way %d, source %v off the axis, K %v: %d shots would do (%v walls), told %v", p, way, axis, k, s.N-1, got, s.Exact)
 			}
@@ -167,6 +170,28 @@ func TestShotsRefuses(t *testing.T) {
 	}
 	if _, err := p.RunAround(Far, 200, 1.1, 0, 90); err == nil {
 		t.Error("an overlap of more than a shot is accepted")
+	}
+}
+
+// TestThetaOfThickWalls: continuous where the formula ends, and never nothing.
+func TestThetaOfThickWalls(t *testing.T) {
+	for _, k := range []float64{1.1, 1.2} {
+		last := math.Pi / 2
+		for share := 0.01; share < 0.499; share += 0.001 {
+			p := Pipe{100, 100 * share}
+			theta := p.Theta(k)
+			if !(theta > 0 && theta <= math.Asin(p.Inner()/p.Outer())+1e-9) || theta > last+0.05 {
+				t.Fatalf("t/De %v, K %v: theta %v rad", share, k, theta)
+			}
+			last = theta
+		}
+		edge := 1 / (1 + k*k)
+		if a, b := (Pipe{100, 100 * (edge - 1e-9)}).Theta(k), (Pipe{100, 100 * (edge + 1e-9)}).Theta(k); math.Abs(a-b) > 1e-4 {
+			t.Errorf("K %v: theta jumps from %v to %v rad", k, a, b)
+		}
+	}
+	if _, err := (Pipe{100, 5}).ShotsAround(Near, 50.0000001, 1.1); err == nil {
+		t.Error("a source on the wall takes no end of shots")
 	}
 }
 
