@@ -5,6 +5,7 @@ import (
 	"reflect"
 	"slices"
 
+	"halfvalue/exposure/boundary"
 	"halfvalue/exposure/plan"
 	"halfvalue/exposure/rules"
 	"halfvalue/exposure/setup"
@@ -177,13 +178,14 @@ func sectionLayers(p plan.Part) [][]plan.Layer {
 
 // Cost is what a mend takes.
 type Cost struct {
-	Plan    plan.Plan // the plan as mended
-	Seconds float64   // its exposure time
-	Breaks  []string  // IDs of checks that fall short after and did not before
+	Plan     plan.Plan       // the plan as mended
+	Seconds  float64         // its exposure time
+	Boundary []boundary.Line // its boundary
+	Breaks   []string        // IDs of checks that fall short after and did not before
 }
 
-// MendCost applies a mend to the plan it was told for: the exposure time that
-// it takes, and every check that it would newly break.
+// MendCost applies a mend to the plan it was told for: the exposure time and
+// the boundary that it takes, and every check that it would newly break.
 func MendCost(p plan.Plan, m Mend, cal Calibration, opts ...Option) (Cost, error) {
 	mended, err := p.With(m.Field, m.To)
 	if err != nil {
@@ -201,7 +203,7 @@ func MendCost(p plan.Plan, m Mend, cal Calibration, opts ...Option) (Cost, error
 	for _, c := range before.Checks {
 		was[c.ID] = c.Verdict
 	}
-	cost := Cost{Plan: mended, Seconds: after.Exposure.Seconds}
+	cost := Cost{Plan: mended, Seconds: after.Exposure.Seconds, Boundary: after.Boundary}
 	for _, c := range after.Checks {
 		if c.Verdict == Short && was[c.ID] != Short {
 			cost.Breaks = append(cost.Breaks, c.ID)

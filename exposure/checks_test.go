@@ -50,7 +50,7 @@ func TestChecks(t *testing.T) {
 					continue
 				}
 				after, err := Reckon(cost.Plan, Calibration{})
-				if err != nil || checkOf(t, after, c.ID).Verdict != Holds || after.Exposure.Seconds != cost.Seconds {
+				if err != nil || len(cost.Boundary) != len(after.Boundary) || checkOf(t, after, c.ID).Verdict != Holds || after.Exposure.Seconds != cost.Seconds {
 					t.Errorf("%s, %s: mended by %+v: %v, %v", p.Title, name, *c.Mend, checkOf(t, after, c.ID), err)
 				}
 			}
