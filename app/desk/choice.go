@@ -151,16 +151,21 @@ func detectorChoices(p plan.Plan) []Choice {
 	}
 	return []Choice{
 		{"detector.film.class", "film class", f.Class, plainOptions(plan.Classes...), func(p *plan.Plan, v string) { p.Detector.Film.Class = v }},
-		{"detector.film.screensMM", "lead screens", screensName(f.ScreensMM), screenOptions(), func(p *plan.Plan, v string) { p.Detector.Film.ScreensMM = screensOf(v) }},
+		{"detector.film.screensMM", "lead screens", screensName(f.ScreensMM), screenOptions(f.ScreensMM), setScreens},
 	}
 }
 
 // screenPairs are the usual lead screens, front and back, mm.
 var screenPairs = [...][2]float64{{0.02, 0.02}, {0.027, 0.027}, {0.05, 0.05}, {0.1, 0.1}, {0.1, 0.15}, {0.15, 0.15}, {0.2, 0.2}}
 
-func screenOptions() []Option {
+// screenOptions are none, the usual pairs, and the plan's own pair.
+func screenOptions(own *[2]float64) []Option {
 	out := []Option{{Value: "none", Title: "No screens"}}
-	for _, s := range screenPairs {
+	pairs := screenPairs[:]
+	if name := screensName(own); name != "none" && screensOf(name) == nil {
+		pairs = append([][2]float64{*own}, pairs...)
+	}
+	for _, s := range pairs {
 		out = append(out, Option{Value: screensName(&s), Title: fmt.Sprintf("Lead %g front, %g mm back", s[0], s[1])})
 	}
 	return out
@@ -171,6 +176,13 @@ func screensName(s *[2]float64) string {
 		return "none"
 	}
 	return fmt.Sprintf("%g+%g", s[0], s[1])
+}
+
+// setScreens leaves the plan's own pair where it is chosen again.
+func setScreens(p *plan.Plan, v string) {
+	if v != screensName(p.Detector.Film.ScreensMM) {
+		p.Detector.Film.ScreensMM = screensOf(v)
+	}
 }
 
 func screensOf(name string) *[2]float64 {

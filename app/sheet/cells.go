@@ -19,6 +19,7 @@ func (u *UI) shotCells(stamps bool) []cell {
 	out = append(out, u.chargeCell())
 	out = append(out, u.dialCell("detector.film.density", "detector.plate.snrN", "detector.panel.snrN")...)
 	out = append(out, u.sourceCells()...)
+	out = append(out, u.partCells()...)
 	out = append(out, u.densityCells()...)
 	out = append(out, u.choiceCell(1, "detector.film.class", "detector.film.screensMM")...)
 	out = append(out, u.setupCells()...)
@@ -149,6 +150,7 @@ func (u *UI) sourceCells() []cell {
 		out := []cell{{caption: s.Nuclide + " at the time of the shot", value: bothActivity(u.s.Answer.ActivityGBq),
 			note: "assayed " + s.Assayed.Format("2006-01-02") + ": " + bothActivity(s.ActivityGBq), span: 2,
 			panel: desk.Panel{Kind: desk.DialPanel, Field: "source.sealed.activityGBq"}, label: "Dial A activity when assayed, " + bothActivity(s.ActivityGBq)}}
+		out = append(out, u.timeOfShot())
 		out = append(out, u.choiceCell(1, "source.sealed.nuclide")...)
 		out = append(out, u.dialCell("source.sealed.sizeMM")...)
 		for i := range s.Collimator {
@@ -167,6 +169,24 @@ func (u *UI) sourceCells() []cell {
 
 func bothActivity(gbq float64) string {
 	return desk.SI.Format(desk.Activity, gbq, 4) + " / " + desk.Customary.Format(desk.Activity, gbq, 3)
+}
+
+// partCells are the layers as the section shows them, for sheets that have no
+// room for it.
+func (u *UI) partCells() []cell {
+	var out []cell
+	for i := range u.s.Plan.Part.Layers {
+		out = append(out, u.dialCell(fmt.Sprintf("part.layers[%d].mm", i))...)
+		out = append(out, u.choiceCell(1, fmt.Sprintf("part.layers[%d].material", i))...)
+	}
+	return append(out, u.dialCell("part.odMM", "part.wallMM")...)
+}
+
+// timeOfShot is the plan's time, to which a sealed source is decayed; touched
+// it becomes now.
+func (u *UI) timeOfShot() cell {
+	at := u.s.Plan.At.Format("2006-01-02 15:04") + " UTC"
+	return cell{caption: "Time of the shot", value: at, note: "touch for now", span: 2, do: desk.AtNow{}, label: "Time of the shot, " + at + ", set to now"}
 }
 
 // densityCells are the densities at each section when there are several.
@@ -215,9 +235,6 @@ func (u *UI) beamCells() []cell {
 	note := "sheet Shot"
 	if u.s.Demo {
 		note += ", demo job"
-	}
-	if !u.s.Plan.At.IsZero() {
-		note += ", " + u.s.Plan.At.Format("2006-01-02 15:04") + " UTC"
 	}
 	return append(out, cell{caption: "Title", value: title, note: note, span: 2})
 }

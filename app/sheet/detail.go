@@ -298,9 +298,9 @@ func (u *UI) bandText(r, words drafting.Rect, d band) {
 func (u *UI) iqi(stack drafting.Rect, bands []band, foot float64) {
 	b, small := &u.bench, u.look.Small()
 	p := u.s.Filled
-	text, y := "IQI, source side", stack.Y0
+	text, y := u.iqiName()+", source side", stack.Y0
 	if p.Setup.Kind == plan.DoubleWallSingleImage || p.Setup.Kind == plan.Panoramic {
-		text = "IQI, film side, F"
+		text = u.iqiName() + ", film side, F"
 		for _, d := range bands {
 			if d.film || d.solid {
 				break
@@ -318,4 +318,14 @@ func (u *UI) iqi(stack drafting.Rect, bands []band, foot float64) {
 		at.Y = foot + small*1.2
 	}
 	b.Text(at, text, drafting.Style{Size: small, Ink: drafting.Faint})
+}
+
+// iqiName is the indicator with the wire that the rules want to see.
+func (u *UI) iqiName() string {
+	for _, c := range u.s.Answer.Checks {
+		if c.ID == "iqi" && c.Unit == "W" && c.Limit > 0 {
+			return "IQI W" + desk.Significant(c.Limit, 2)
+		}
+	}
+	return "IQI"
 }

@@ -40,7 +40,7 @@ func views() []view {
 			view{name: fmt.Sprintf("demo %d large", i), plan: i, text: 200, units: desk.SI},
 			view{name: fmt.Sprintf("demo %d inches", i), plan: i, text: 100, units: desk.Customary})
 	}
-	for _, text := range []int{100, 160, 200} {
+	for _, text := range []int{100, 200} {
 		add := func(name string, p int, do ...desk.Intent) {
 			out = append(out, view{name: fmt.Sprintf("%s %d", name, text), plan: p, text: text, units: desk.SI, shots: 12, do: do})
 		}
@@ -51,6 +51,8 @@ func views() []view {
 		add("film class", 0, show(desk.ChoicePanel, "detector.film.class"))
 		add("working", 0, show(desk.WorkingPanel, ""))
 		add("boundary", 3, show(desk.WorkingPanel, "boundary"))
+		add("check short", 0, show(desk.CheckPanel, "film-class"))
+		add("check undecided", 3, show(desk.CheckPanel, "max-kv"))
 		add("log", 0, show(desk.LogPanel, ""))
 		add("look", 0, show(desk.LookPanel, ""))
 		add("book", 0, desk.GoTo{Sheet: desk.BookSheet})
@@ -80,7 +82,7 @@ func showView(t *testing.T, v view, w, h int) *hand {
 	for _, in := range v.do {
 		x.desk.Apply(in)
 	}
-	x.frames(20)
+	x.frames(6)
 	return x
 }
 

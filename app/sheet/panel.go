@@ -25,7 +25,7 @@ func (u *UI) panelHeight(width, most float64) float64 {
 	case desk.LookPanel:
 		return u.lookHeight(width) + pad
 	case desk.CheckPanel:
-		return 300*u.look.Text + pad
+		return u.checkHeight(width-u.look.Target-3*touch.Unit) + pad
 	}
 	return 460 * math.Sqrt(u.look.Text)
 }

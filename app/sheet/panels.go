@@ -84,7 +84,21 @@ func (u *UI) choicePanel(r drafting.Rect) {
 	} else {
 		r = u.heading(r, capital(c.Name))
 	}
-	u.optionGrid(r, c, options)
+	u.optionGrid(u.layerButtons(r, c.Field), c, options)
+}
+
+// layerButtons add and take out layers where a layer's material is chosen.
+func (u *UI) layerButtons(r drafting.Rect, field string) drafting.Rect {
+	i := -1
+	if n, err := fmt.Sscanf(field, "part.layers[%d].material", &i); n != 1 || err != nil {
+		return r
+	}
+	row, rest := r.CutBottom(u.look.Target)
+	cells := row.Columns(2, touch.Unit)
+	u.bench.Button(touch.Button{Box: cells[0], Label: "Add a layer", Do: u.do(desk.AddLayer{After: i})})
+	u.bench.Button(touch.Button{Box: cells[1], Label: "Take it out", Off: len(u.s.Plan.Part.Layers) < 2, Do: u.do(desk.DropLayer{Index: i})})
+	rest.Y1 -= touch.Unit
+	return rest
 }
 
 // narrow keeps the options whose title or note has every word.
@@ -126,26 +140,57 @@ func (u *UI) optionGrid(r drafting.Rect, c desk.Choice, options []desk.Option) {
 	})
 }
 
+// openCheck is the check whose panel is open.
+func (u *UI) openCheck() (desk.Check, bool) {
+	for _, c := range u.s.Answer.Checks {
+		if c.ID == u.s.Panel.Field {
+			return c, true
+		}
+	}
+	return desk.Check{}, false
+}
+
+func (u *UI) checkHeight(width float64) float64 {
+	b := &u.bench
+	c, _ := u.openCheck()
+	h := u.bench.Height(width, checkTitle(c), u.look.Strong()) + b.Height(width-u.look.Target, u.checkBody(c), u.look.Plain()) + 2*touch.Unit
+	if c.Mend != nil {
+		h += b.ButtonHeight(mendText(c), width) + touch.Unit
+	}
+	return h
+}
+
+func checkTitle(c desk.Check) string { return capital(c.Name) + ": " + verdictWord(c.Verdict) }
+
+func mendText(c desk.Check) string { return capital(c.Mend.Text) + ": take it" }
+
+func (u *UI) checkBody(c desk.Check) string {
+	if c.Source == "" {
+		return u.checkText(c)
+	}
+	return u.checkText(c) + "\nSource: " + c.Source
+}
+
 // checkPanel shows one check: verdict, figures, source and the mend.
 func (u *UI) checkPanel(r drafting.Rect) {
 	b := &u.bench
-	for _, c := range u.s.Answer.Checks {
-		if c.ID != u.s.Panel.Field {
-			continue
-		}
-		r = u.heading(r, c.Name+": "+verdictWord(c.Verdict))
-		if c.Mend != nil {
-			row, rest := r.CutBottom(b.ButtonHeight(c.Mend.Text, r.W()))
-			b.Button(touch.Button{Box: row, Label: "Take the mend", Text: c.Mend.Text, Strong: true, Do: u.do(desk.TakeMend{Check: c.ID})})
-			r, _ = rest.CutTop(rest.H() - touch.Unit)
-		}
-		text := u.checkText(c)
-		if c.Source != "" {
-			text += "\nSource: " + c.Source
-		}
-		h := b.Height(r.W()-u.look.Target, text, u.look.Plain())
-		b.Scroll("Check", r, h, func(in drafting.Rect) { b.Paragraph(in, text, u.look.Plain()) })
+	c, ok := u.openCheck()
+	if !ok {
+		return
 	}
+	r = u.heading(r, checkTitle(c))
+	if c.Mend != nil {
+		row, rest := r.CutBottom(b.ButtonHeight(mendText(c), r.W()))
+		b.Button(touch.Button{Box: row, Label: "Take the mend", Text: mendText(c), Strong: true, Do: u.do(desk.TakeMend{Check: c.ID})})
+		r = rest
+		r.Y1 -= touch.Unit
+	}
+	text := u.checkBody(c)
+	b.Scroll("Check", r, b.Height(r.W()-u.look.Target, text, u.look.Plain()), func(in drafting.Rect) {
+		in.X1 = r.X1 - u.look.Target
+		b.Paragraph(in, text, u.look.Plain())
+		b.Words(in, text)
+	})
 }
 
 // workingPanel lists the steps behind every number, or behind those whose

@@ -202,6 +202,46 @@ func TestChooseMaterialBySearch(t *testing.T) {
 	}
 }
 
+// A stamp opens its check, and its mend is taken with one touch.
+func TestStampOpensAndMends(t *testing.T) {
+	eachSize(t, func(t *testing.T, w, h int) {
+		x := newHand(t, w, h, plan.Demo())
+		down := "Checks: down"
+		if w < 560 {
+			down = "Title block: down"
+		}
+		x.reach("Film class: falls short", down)
+		x.tap("Film class: falls short")
+		if p := x.desk.State().Panel; p.Kind != desk.CheckPanel || p.Field != "film-class" {
+			t.Fatalf("the stamp opened %+v", p)
+		}
+		x.tap("Take the mend")
+		if got := x.desk.State().Plan.Detector.Film.Class; got != "C4" {
+			t.Fatalf("the mend left film %s, refusal %v", got, x.desk.State().Refusal)
+		}
+		for _, c := range x.desk.State().Answer.Checks {
+			if c.ID == "film-class" && c.Verdict != desk.Holds {
+				t.Fatalf("after its mend the check %s", c.Verdict)
+			}
+		}
+	})
+}
+
+func TestLayersAreAddedAndTakenOut(t *testing.T) {
+	x := newHand(t, 800, 1280, plan.Demo())
+	x.desk.Apply(desk.Set{Field: "part.layers[0].mm", To: 8})
+	x.frames(2)
+	x.tap("Choose Carbon steel")
+	x.tap("Add a layer")
+	if n := len(x.desk.State().Plan.Part.Layers); n != 2 {
+		t.Fatalf("%d layers, refusal %v", n, x.desk.State().Refusal)
+	}
+	x.tap("Take it out")
+	if p := x.desk.State().Plan; len(p.Part.Layers) != 1 || p.Setup.BMM != 8 {
+		t.Fatalf("%d layers, b %v", len(p.Part.Layers), p.Setup.BMM)
+	}
+}
+
 func TestLookChangesLightUnitsTextAndTargets(t *testing.T) {
 	x := newHand(t, 1280, 800, plan.Demo())
 	x.tap("Look")

@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"math"
+	"strings"
 
 	"halfvalue/app/desk"
 	"halfvalue/app/drafting"
@@ -26,8 +27,8 @@ func (u *UI) shotWide(in drafting.Rect) {
 	b := &u.bench
 	share := 0.30 + 0.14*(u.look.Text-1)
 	block, view := in.CutRight(math.Max(300, in.W()*share))
+	u.titleBlock(drafting.Rect{X0: block.X0 + drafting.Bold/2, Y0: block.Y0, X1: block.X1, Y1: block.Y1}, false)
 	b.Line(drafting.Pt{X: block.X0, Y: block.Y0}, drafting.Pt{X: block.X0, Y: block.Y1}, drafting.Bold, drafting.Line)
-	u.titleBlock(block, false)
 	if u.s.Panel.Kind != desk.NoPanel {
 		view = u.panelBelow(view, 0.86)
 	} else {
@@ -84,25 +85,27 @@ func (u *UI) stamps(view drafting.Rect) drafting.Rect {
 		return view
 	}
 	b := &u.bench
-	columns := max(1, int(view.W()/(210*u.look.Text)))
-	width := (view.W() - touch.Unit*float64(columns+1)) / float64(columns)
-	height := 0.0
-	for _, c := range checks {
-		height = math.Max(height, b.StampHeight(c.Name, u.checkText(c), width))
-	}
+	columns := max(1, int(view.W()/(230*u.look.Text)))
+	height := u.stampHeight()
 	rows := (len(checks) + columns - 1) / columns
 	full := float64(rows)*(height+touch.Unit) + touch.Unit
 	box, rest := view.CutBottom(math.Min(full, view.H()*0.4))
 	b.Line(drafting.Pt{X: box.X0, Y: box.Y0}, drafting.Pt{X: box.X1, Y: box.Y0}, drafting.Thin, drafting.Line)
-	b.Scroll("Checks", box, full, func(r drafting.Rect) {
+	box.Y0 += drafting.Thin
+	b.Scroll("Checks", box, full-drafting.Thin, func(r drafting.Rect) {
 		w := (r.W() - touch.Unit*float64(columns+1)) / float64(columns)
 		for i, c := range checks {
 			x := r.X0 + touch.Unit + float64(i%columns)*(w+touch.Unit)
-			y := r.Y0 + touch.Unit + float64(i/columns)*(height+touch.Unit)
+			y := r.Y0 + touch.Unit + float64(i/columns)*(height+touch.Unit) - drafting.Thin
 			u.stamp(drafting.Rect{X0: x, Y0: y, X1: x + w, Y1: y + height}, c)
 		}
 	})
 	return rest
+}
+
+// stampHeight is that of a name and one line.
+func (u *UI) stampHeight() float64 {
+	return math.Max(u.look.Target, u.look.Small()*drafting.Leading*2+touch.Unit)
 }
 
 func (u *UI) stamp(r drafting.Rect, c desk.Check) {
@@ -111,9 +114,26 @@ func (u *UI) stamp(r drafting.Rect, c desk.Check) {
 	if !ok {
 		m = touch.Open
 	}
+	room := r.W() - u.look.Target - 2*touch.Unit
+	u.bench.Stamp(touch.Stamp{Box: r, Mark: m, Name: u.bench.Fit(capital(c.Name), room, drafting.Style{Size: u.look.Small(), Bold: true}), Text: u.stampText(c, room),
+		Label: capital(c.Name) + ": " + verdictWord(c.Verdict) + ". " + u.checkText(c), Do: u.toggle(desk.Panel{Kind: desk.CheckPanel, Field: c.ID})})
+}
+
+// stampText is what a check says in one line: its words if they fit, else its
+// figure against its limit, else the beginning of its words.
+func (u *UI) stampText(c desk.Check, room float64) string {
+	st := u.look.Caption()
 	text := u.checkText(c)
-	u.bench.Stamp(touch.Stamp{Box: r, Mark: m, Name: c.Name, Text: text, Label: c.Name + ": " + verdictWord(c.Verdict) + ". " + text,
-		Do: u.toggle(desk.Panel{Kind: desk.CheckPanel, Field: c.ID})})
+	if u.bench.Fonts.Width(text, st.Size, false) <= room {
+		return text
+	}
+	if c.Value != 0 && c.Limit != 0 {
+		figures := strings.TrimSpace(desk.Significant(c.Value, 3) + ", limit " + desk.Significant(c.Limit, 3) + " " + unitText(c.Unit))
+		if u.bench.Fonts.Width(figures, st.Size, false) <= room {
+			return figures
+		}
+	}
+	return u.bench.Fit(text, room, st)
 }
 
 func verdictWord(v string) string {
@@ -126,16 +146,12 @@ func verdictWord(v string) string {
 	return "not decided"
 }
 
-// checkText is the figure against its limit.
+// checkText is a check in words.
 func (u *UI) checkText(c desk.Check) string {
 	if c.Text != "" {
 		return c.Text
 	}
-	t := verdictWord(c.Verdict)
-	if c.Value != 0 || c.Limit != 0 {
-		t += ": " + desk.Significant(c.Value, 4) + " against " + desk.Significant(c.Limit, 4) + " " + c.Unit
-	}
-	return t
+	return desk.Significant(c.Value, 4) + " against " + desk.Significant(c.Limit, 4) + " " + unitText(c.Unit)
 }
 
 // drawing draws side view and section next to each other, the section only

@@ -271,6 +271,24 @@ func inside(r, room drafting.Rect) drafting.Rect {
 	return r.Moved(dx, dy).And(room)
 }
 
+// diameter writes De inside the pipe, or left of it where it is too small, and
+// returns what to touch.
+func (u *UI) diameter(g sight, p plan.Plan, y float64) drafting.Rect {
+	b, small := &u.bench, u.look.Small()
+	outer := p.Part.ODMM / 2 * g.scale
+	text := "De " + u.s.Units.Format(desk.Length, p.Part.ODMM, 4)
+	w := b.Fonts.Width(text, small, true)
+	st := drafting.Style{Size: small, Bold: true, Ink: drafting.Line, Align: drafting.Middle, Knock: true}
+	at := drafting.Pt{X: g.cx, Y: y + drafting.CapHeight*small/2}
+	if w > 1.7*outer {
+		at.X, st.Align = g.cx-outer-8, drafting.End
+		if at.X-w < g.view.X0-4 {
+			return drafting.Rect{X0: g.cx - outer, X1: g.cx + outer, Y0: y - outer, Y1: y + outer}
+		}
+	}
+	return b.Text(at, text, st)
+}
+
 // tubeHead draws a housing with its anode, as a symbol, not to scale.
 func (u *UI) tubeHead(at drafting.Pt, anodeDeg float64) {
 	b := &u.bench
@@ -329,7 +347,7 @@ func (u *UI) sideDimensions(g sight, p plan.Plan, r drafting.Rect, small float64
 	bd := b.Dimension(drafting.Dimension{A: drafting.Pt{X: xr, Y: g.surface}, B: drafting.Pt{X: xr, Y: g.film + 2}, Text: u.bText(), Size: small, Bold: true, Ink: drafting.Line})
 	u.open(bd.And(drafting.Rect{X0: r.X0, Y0: g.surface - 6, X1: r.X1, Y1: r.Y1}), "setup.bMM", "")
 	u.coneDimension(g, p, small)
-	u.partTarget(g, p, small)
+	u.partTarget(g, p)
 }
 
 // coneDimension writes the opening of the beam as an arc inside it.
@@ -361,19 +379,13 @@ func (u *UI) coneDimension(g sight, p plan.Plan, small float64) {
 
 // partTarget lets the part be touched in the side view, and gives a pipe its
 // diameter.
-func (u *UI) partTarget(g sight, p plan.Plan, small float64) {
-	b := &u.bench
+func (u *UI) partTarget(g sight, p plan.Plan) {
 	if p.Part.ODMM > 0 {
 		c := g.surface + p.Part.ODMM/2*g.scale
 		if p.Setup.Kind == plan.Panoramic {
 			c = g.back - p.Part.ODMM/2*g.scale
 		}
-		st := drafting.Style{Size: small, Bold: true, Ink: drafting.Line, Align: drafting.Middle, Knock: true}
-		text, box := "De "+u.s.Units.Format(desk.Length, p.Part.ODMM, 4), drafting.Rect{X0: g.cx - 28, X1: g.cx + 28, Y0: c - 28, Y1: c + 28}
-		if b.Fonts.Width(text, small, true) < g.view.W() {
-			box = b.Text(drafting.Pt{X: g.cx, Y: c + drafting.CapHeight*small/2}, text, st)
-		}
-		u.open(box, "part.odMM", "")
+		u.open(u.diameter(g, p, c), "part.odMM", "")
 		return
 	}
 	u.open(drafting.Rect{X0: g.cx - 60, Y0: g.surface, X1: g.cx + 60, Y1: g.back}, "part.layers[0].mm", "")

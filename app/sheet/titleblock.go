@@ -16,7 +16,8 @@ type cell struct {
 	span                 int         // columns, 1 or 2
 	check                *desk.Check // a stamp instead
 	panel                desk.Panel
-	label                string // of its target
+	do                   desk.Intent // instead of a panel
+	label                string      // of its target
 }
 
 // titleBlock draws the answer and what the shot rests on, in cells that can
@@ -91,14 +92,14 @@ func (u *UI) valueStyle(c cell, width float64) drafting.Style {
 func (u *UI) cellHeight(width float64, c cell) float64 {
 	b := &u.bench
 	if c.check != nil {
-		return b.StampHeight(c.check.Name, u.checkText(*c.check), width-touch.Unit) + touch.Unit
+		return u.stampHeight() + touch.Unit
 	}
 	w := width - 2*touch.Unit - u.ropeRoom(c)
 	h := 1.5*touch.Unit + b.Height(w, c.caption, u.look.Caption()) + b.Height(w, c.value, u.valueStyle(c, w))
 	if c.note != "" {
 		h += b.Height(w, c.note, u.look.Caption())
 	}
-	if c.panel.Kind != desk.NoPanel {
+	if c.touchable() {
 		h = math.Max(h, u.look.Target)
 	}
 	return h
@@ -118,7 +119,7 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	switch {
 	case open || (c.label != "" && b.Pressed(c.label)):
 		b.Fill(drafting.Box(r), drafting.BeamWash)
-	case c.panel.Kind != desk.NoPanel:
+	case c.touchable():
 		b.Fill(drafting.Box(r.Inset(0.5)), drafting.Block)
 	}
 	b.Line(drafting.Pt{X: r.X0, Y: r.Y1 - 1}, drafting.Pt{X: r.X1, Y: r.Y1 - 1}, drafting.Hair, drafting.Faint)
@@ -140,7 +141,7 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	if c.note != "" {
 		text += ", " + c.note
 	}
-	if c.panel.Kind == desk.NoPanel {
+	if !c.touchable() {
 		b.Words(r, text)
 		return
 	}
@@ -148,9 +149,15 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	if label == "" {
 		label = text
 	}
-	b.Target(r, label, u.toggle(c.panel))
+	act := u.toggle(c.panel)
+	if c.do != nil {
+		act = u.do(c.do)
+	}
+	b.Target(r, label, act)
 	b.Ring(label, r)
 }
+
+func (c cell) touchable() bool { return c.panel.Kind != desk.NoPanel || c.do != nil }
 
 // answerHeight is the height of the band that keeps the answer in view while a
 // panel is open.

@@ -36,9 +36,11 @@ func (b *Bench) Stamp(s Stamp) {
 	case Open:
 		b.Stroke(drafting.Box(s.Box.Inset(0.5)), drafting.Thin, drafting.Line, 5, 4)
 	}
-	in := rest.Inset(Unit)
-	h := b.Paragraph(drafting.Rect{X0: in.X0, Y0: in.Y0 - 4, X1: in.X1, Y1: in.Y1}, s.Name, drafting.Style{Size: b.Look.Small(), Bold: true, Ink: drafting.Line})
-	b.Paragraph(drafting.Rect{X0: in.X0, Y0: in.Y0 - 4 + h, X1: in.X1, Y1: in.Y1}, s.Text, drafting.Style{Size: b.Look.Small(), Ink: drafting.Line})
+	in := drafting.Rect{X0: rest.X0 + Unit, X1: rest.X1 - Unit, Y0: rest.Y0, Y1: rest.Y1}
+	top, foot := in, in
+	top.Y1, foot.Y0 = in.Mid().Y, in.Mid().Y
+	b.TextIn(top.Moved(0, 2), s.Name, drafting.Style{Size: b.Look.Small(), Bold: true, Ink: drafting.Line})
+	b.TextIn(foot.Moved(0, -4), s.Text, drafting.Style{Size: b.Look.Small(), Ink: drafting.Line})
 	b.Target(s.Box, s.Label, s.Do)
 	b.Ring(s.Label, s.Box)
 }
@@ -56,13 +58,4 @@ func (b *Bench) markField(r drafting.Rect, m Mark) {
 		b.Hatch(drafting.Box(r.Inset(1)), "", drafting.Faint)
 		b.TextIn(r, "?", drafting.Style{Size: b.Look.Body(), Bold: true, Ink: drafting.Line, Align: drafting.Middle, Knock: true})
 	}
-}
-
-// StampHeight is the height that a stamp needs in a width.
-func (b *Bench) StampHeight(name, text string, width float64) float64 {
-	w := width - b.Look.Target - 2*Unit
-	small := drafting.Style{Size: b.Look.Small(), Bold: true}
-	h := b.Height(w, name, small)
-	small.Bold = false
-	return max(b.Look.Target, h+b.Height(w, text, small)+2*Unit-6)
 }
