@@ -116,7 +116,9 @@ func (s *shot) image(r *Reckoning, ref field, seconds float64) error {
 func (s *shot) spot(r *Reckoning, at string, f field, seconds float64) {
 	v := s.receptor.reading(f.receptorRate, seconds)
 	if s.receptor.film != nil {
-		r.Density = append(r.Density, Spot{at, f.depthMM, v})
+		wide := math.Exp(coverage * total(r.Spread))
+		low, high := s.receptor.reading(f.receptorRate, seconds/wide), s.receptor.reading(f.receptorRate, seconds*wide)
+		r.Density = append(r.Density, Spot{at, f.depthMM, v, low, high})
 		return
 	}
 	r.SNR = append(r.SNR, Signal{at, f.depthMM, v})

@@ -52,6 +52,8 @@ type Spot struct {
 	At          string  `json:"at"`
 	ThicknessMM float64 `json:"thicknessMM"` // material along the ray
 	Density     float64 `json:"density"`     // with base and fog
+	DensityLow  float64 `json:"densityLow"`  // between which it is believed to lie
+	DensityHigh float64 `json:"densityHigh"` // when the time is kept
 }
 
 // Signal is one place of the part on a plate or a panel.
@@ -98,7 +100,9 @@ type Mend struct {
 type Contribution struct {
 	Name     string  `json:"name"`
 	Input    float64 `json:"input"`    // the input's own standard deviation
-	Unit     string  `json:"unit"`     // of Input: "%" or a unit
+	Unit     string  `json:"unit"`     // of Input: "%"
+	From     string  `json:"from"`     // who says so: default, plan or test shots
+	Power    float64 `json:"power"`    // of the input that the time goes by
 	Relative float64 `json:"relative"` // what it does to the time
 }
 

@@ -207,7 +207,7 @@ func newReceptor(d plan.Detector) (receptor, error) {
 	var r receptor
 	switch {
 	case d.Film != nil:
-		f, err := detector.FilmByClass(d.Film.Class)
+		f, err := filmOf(*d.Film)
 		if err != nil {
 			return r, err
 		}
@@ -252,6 +252,20 @@ func (r receptor) reads(d plan.Detector) (receptor, error) {
 			Allowed: fmt.Sprintf("less than %g", r.digital.MostSNRn()), Mend: "take a lower signal to noise ratio"}
 	}
 	return r, nil
+}
+
+// filmOf is the film of its class, with what the plan knows of the make.
+func filmOf(p plan.Film) (detector.Film, error) {
+	f, err := detector.FilmByClass(p.Class)
+	if err != nil || p.Data == (plan.FilmData{}) {
+		return f, err
+	}
+	f, ok := f.With(p.Data.KsMGy, p.Data.G2, p.Data.G4, p.Data.BaseAndFog)
+	if !ok {
+		return f, &plan.FieldError{Field: "detector.film.data.g4", Value: fmt.Sprint(f.G4), Problem: fmt.Sprintf("fits no curve with a gradient of %g at density 2", f.G2),
+			Allowed: fmt.Sprintf("%.3g to %.3g", detector.LeastG4ByG2*f.G2, detector.MostG4ByG2*f.G2), Mend: "check both gradients on the data sheet"}
+	}
+	return f, nil
 }
 
 // receptorRate is what a detector gathers in a second: for film the dose it

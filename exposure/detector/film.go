@@ -67,6 +67,32 @@ func FilmByClass(class string) (Film, error) {
 	return Film{}, fmt.Errorf("film class %q is unknown: take one of %s", class, strings.Join(known, ", "))
 }
 
+// Range of G4/G2 that the curve can take: below, it would saturate short of
+// density 4; at 2 it would never saturate.
+const (
+	LeastG4ByG2 = 0.5
+	MostG4ByG2  = 1.98
+)
+
+// With gives the film with a make's own figures; 0 keeps what it has. false
+// where no curve has such gradients.
+func (f Film) With(ksMGy, g2, g4, baseAndFog float64) (Film, bool) {
+	for _, v := range []struct {
+		to    *float64
+		value float64
+	}{{&f.KsMGy, ksMGy}, {&f.G2, g2}, {&f.G4, g4}, {&f.BaseAndFog, baseAndFog}} {
+		if v.value != 0 {
+			*v.to = v.value
+		}
+	}
+	if f.G4 < LeastG4ByG2*f.G2 || f.G4 > MostG4ByG2*f.G2 {
+		return f, false
+	}
+	f.Source, f.Confidence = "the make's own data, from the plan; what it leaves out is the class's", "as good as the data sheet"
+	f.shape()
+	return f, true
+}
+
 // shape solves the curve from Ks and the two gradients: with x = -ln(1-D/Dm)
 // the gradient is ln(10) p x (Dm-D), whose ratio at 4 and 2 fixes Dm.
 func (f *Film) shape() {
