@@ -142,14 +142,18 @@ func perSr(row *[sideBins]float64, a int) []float64 {
 }
 
 // At gives photons/sr of one exit bin at an angle of 0 to 180 deg, straight
-// between the middles of the angular bins. From 82.5 to 97.5 deg, along the
-// slab, the larger side stands: an endless slab sends nothing out at 90 deg,
-// but a real one has edges.
+// between the middles of the angular bins. From 67.5 to 112.5 deg, along the
+// slab, the largest of the four bins there stands: an endless slab sends
+// nothing out at 90 deg, but a real one has edges.
 func (e Emission) At(angleDeg float64, bin int) float64 {
 	n := len(e.PerSr)
 	mid := func(a int) float64 { return (e.AngleEdgesDeg[a] + e.AngleEdgesDeg[a+1]) / 2 }
-	if angleDeg > mid(n/2-1) && angleDeg < mid(n/2) {
-		return max(e.PerSr[n/2-1][bin], e.PerSr[n/2][bin])
+	if angleDeg > mid(n/2-2) && angleDeg < mid(n/2+1) {
+		var most float64
+		for a := n/2 - 2; a < n/2+2; a++ {
+			most = max(most, e.PerSr[a][bin])
+		}
+		return most
 	}
 	a := 0
 	for a < n-2 && angleDeg > mid(a+1) {

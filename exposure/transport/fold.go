@@ -24,11 +24,12 @@ type coefficients struct {
 
 // fold is one use of the tables.
 type fold struct {
-	sum [][]coefficients // by base, by node
+	sum   [][]coefficients // by base, by node
+	least float64          // the smallest exponent so far
 }
 
 func newFold() *fold {
-	return &fold{sum: make([][]coefficients, len(table()))}
+	return &fold{sum: make([][]coefficients, len(table())), least: math.Inf(1)}
 }
 
 // add asks for photons of an energy, x mean free paths of material, n
@@ -58,9 +59,10 @@ func (f *fold) add(b *blend, keV, x, n float64) {
 	if x > last {
 		ex += beyond * (x - last)
 	}
-	if ex > spent {
+	if ex > f.least+spent {
 		return
 	}
+	f.least = min(f.least, ex)
 	a := n * math.Exp(-ex)
 	var w [4]float64
 	k, m := planeWeights(x, &w)
@@ -109,7 +111,8 @@ const (
 	startCount      = 9 * startsPerOctave
 )
 
-// spent is the exponent past which a photon's share is dropped: 1e-26 of it at most.
+// spent is how much more attenuated than another a photon may be before it is
+// dropped: 1e-26 of it then comes through at most.
 const spent = 60
 
 func (c *coefficients) add(shift, a float64, k int, w []float64) {

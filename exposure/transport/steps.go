@@ -2,36 +2,10 @@ package transport
 
 import (
 	"fmt"
-	"math"
 	"strings"
 
 	"halfvalue/exposure/working"
-	"halfvalue/materials"
 )
-
-// CoherentOnly gives, for each input energy, the fluence of photons that were
-// scattered only coherently behind the layers: they kept their energy and mostly
-// their direction. Slab counts them as scattered; sources that know no coherent
-// scattering count them with the primary. Their share is found as exp(mu_coherent
-// x) - 1 of the primary, without losses to the sides.
-func CoherentOnly(layers []Layer, keV, perCM2 []float64) ([]float64, error) {
-	if err := checkLayers(layers); err != nil {
-		return nil, err
-	}
-	if err := checkSpectrum(keV, perCM2); err != nil {
-		return nil, err
-	}
-	out := make([]float64, len(keV))
-	for i, e := range keV {
-		var all, coherent float64
-		for _, l := range layers {
-			all += l.Material.MuPerMM(e) * l.MM
-			coherent += l.Material.MuRhoOf(materials.Coherent, e) * l.Material.DensityGPerCM3() / 10 * l.MM
-		}
-		out[i] = perCM2[i] * math.Exp(-all) * math.Expm1(coherent)
-	}
-	return out, nil
-}
 
 // Step is the working of the scatter behind layers: the ratio of scattered to
 // primary, each weighted by weight, whose name goes into the text ("air kerma",

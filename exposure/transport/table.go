@@ -72,7 +72,7 @@ var table = sync.OnceValue(func() []base {
 	}
 	for i := range all {
 		for j := range all[i].nodes {
-			all[i].nodes[j].fill(&data[0])
+			all[i].nodes[j].fill(all[i].material, &data[0])
 			data = data[1:]
 		}
 	}
@@ -91,7 +91,7 @@ func (b *base) index() {
 }
 
 // fill takes a cell of the table.
-func (n *node) fill(c *cells.Packed) {
+func (n *node) fill(m *materials.Material, c *cells.Packed) {
 	last := len(planes) - 1
 	for k := 1; k <= last; k++ {
 		for i, f := range c.Flux[k-1] {
@@ -104,7 +104,7 @@ func (n *node) fill(c *cells.Packed) {
 		n.relErr[k] = c.RelErr[k-1]
 	}
 	n.relErr[0] = n.relErr[1]
-	n.slopes()
+	n.slopes(m)
 	for k := 1; k <= last; k++ {
 		up := math.Exp(n.decay * planes[k])
 		for i := range n.flux[k] {
@@ -114,20 +114,56 @@ func (n *node) fill(c *cells.Packed) {
 		n.kerma[k] *= up
 	}
 	n.angle = [2][]sideTable{c.Forward, c.Backward}
+	for side := range n.angle {
+		edges(n.angle[side])
+	}
+}
+
+// edges lets the angles within 30 deg of the slab's plane keep the most that
+// any thinner slab sends there: parts have edges and curved faces, where what
+// goes sideways is not held back by the rest of the slab.
+func edges(byPlane []sideTable) {
+	for k := 1; k < len(byPlane); k++ {
+		for a := range byPlane[k] {
+			if photon.AngleEdgesDeg[a] < 60 {
+				continue
+			}
+			for i, v := range byPlane[k-1][a] {
+				byPlane[k][a][i] = max(byPlane[k][a][i], v)
+			}
+		}
+	}
 }
 
 // slopes finds the decay that makes the table flat, and the slope with which
-// it is continued: that of the last two thicknesses less their error.
-// The slope of ln S grows with depth, so the last is the least of what follows.
-func (n *node) slopes() {
+// it is continued. The slope of ln S grows with depth, as the soft photons die
+// out, so the last one of the table, less its error, is never too steep. Not so
+// above a K edge, where photons under the edge take over that reach further:
+// there the slope falls towards that of the most penetrating photon of lower
+// energy, and 0.95 of it is taken (few of those photons scatter on, c < 0.3).
+func (n *node) slopes(m *materials.Material) {
 	last := len(planes) - 1
 	from := 7 // 2 mean free paths
 	if !(n.kerma[last] > 0 && n.kerma[from] > 0) {
-		n.decay, n.beyond = 1, 1
-		return
+		panic(fmt.Sprintf("transport: %s has no scatter at %g keV: the table is damaged", m.Name(), n.keV))
 	}
 	n.decay = min(1, math.Log(n.kerma[from]/n.kerma[last])/(planes[last]-planes[from]))
 	dx := planes[last] - planes[last-2]
 	noise := 2 * math.Hypot(n.relErr[last], n.relErr[last-2])
-	n.beyond = max(0, min(1, (math.Log(n.kerma[last-2]/n.kerma[last])-noise)/dx))
+	n.beyond = min(1, (math.Log(n.kerma[last-2]/n.kerma[last])-noise)/dx)
+	if r := furthest(m, n.keV); r < 1 {
+		n.beyond = min(n.beyond, 0.95*r)
+	}
+	n.beyond = max(0, n.beyond)
+}
+
+// furthest is the least coefficient of photons of lower energy over that at
+// keV: below 1 above a K edge only.
+func furthest(m *materials.Material, keV float64) float64 {
+	least := m.MuRho(keV)
+	all := least
+	for e := float64(CutKeV); e < keV; e *= 1.002 {
+		least = min(least, m.MuRho(e))
+	}
+	return least / all
 }

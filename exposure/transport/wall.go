@@ -8,7 +8,8 @@ import (
 )
 
 // BroadTransmission gives the share of a weighted fluence that comes through a
-// wall mm thick, uncollided and scattered, in a wide field. NaN for input that
+// wall mm thick, hit normally, uncollided and scattered, in a wide field. For
+// slanted rays take ObliqueMM, not the length along the ray. NaN for input that
 // Slab would refuse.
 func BroadTransmission(m *materials.Material, mm float64, keV, perCM2 []float64, weight func(keV float64) float64) float64 {
 	exit, err := Slab([]Layer{{m, mm}}, keV, perCM2)
@@ -38,7 +39,7 @@ func KermaPerFluence(keV float64) float64 { return photon.KermaPerFluence(keV) }
 // Oblique rays: how much of the added path counts, and the steepest angle that counts.
 const (
 	obliqueCredit = 0.2
-	obliqueMost   = 75.0
+	obliqueMost   = 60.0
 )
 
 // ObliqueMM gives the thickness of a wall, hit normally, that stands for a wall
@@ -46,8 +47,8 @@ const (
 // the slanted path for the short way out, so the length along the ray,
 // mm/cos(angle), promises too much: 4 times too little dose behind 10 mean free
 // paths of concrete at 45 deg, 15 times at 60. A fifth of the added length is
-// credited, which our Monte Carlo finds safe from 10 keV to 3 MeV (compared
-// for concrete, steel and lead); it errs outward.
+// credited, up to 60 deg, which our Monte Carlo finds safe for concrete, steel
+// and lead at 60 to 1250 keV; it errs outward.
 func ObliqueMM(mm, angleDeg float64) float64 {
 	a := min(math.Abs(angleDeg), obliqueMost) * math.Pi / 180
 	return mm * (1 + obliqueCredit*(1/math.Cos(a)-1))

@@ -89,7 +89,7 @@ type Effort struct {
 
 // Full and Coarse are the efforts of the shipped table and of a trial.
 var (
-	Full   = Effort{First: 60_000, Most: 900_000, Target: 0.006}
+	Full   = Effort{First: 60_000, Most: 1_200_000, Target: 0.006}
 	Coarse = Effort{First: 12_000, Most: 12_000, Target: 1}
 )
 

@@ -88,7 +88,7 @@ type field struct {
 func newField(s Sphere) *field {
 	f := &field{med: s.Medium, keV: s.KeV, mu: s.Medium.MuRho(s.KeV), radii: s.RadiiMFP}
 	f.out = s.RadiiMFP[len(s.RadiiMFP)-1] + beyondMFP
-	w := window{from: []float64{0}, slope: []float64{windowBins / f.out}, begin: []float64{0}}
+	w := window{perKeV: 1 / s.KeV, from: []float64{0}, slope: []float64{windowBins / f.out}, begin: []float64{0}}
 	for b := range w.center {
 		x := (float64(b) + 0.5) / windowBins * f.out
 		w.center[b] = x
@@ -130,7 +130,7 @@ func (w *shellWalker) collide(p particle) {
 	c, t := w.med.at(p.e)
 	p.w *= c.live + t*c.dlive
 	bin := w.window.bin(0, p.z)
-	w.seen[bin] += p.w
+	w.seen[bin] += w.window.worth(&p)
 	for range w.window.split(&p, bin, w.r) {
 		q := p
 		q.e, q.u = w.med.collide(w.r, c, t, p.e, p.u)
@@ -181,11 +181,12 @@ func (w *shellWalker) stop(p *particle, along, near2, step float64) (float64, bo
 		from = math.Sqrt(max(0, near2))
 	}
 	first, last := w.window.bin(0, from)+1, w.window.bin(0, far)
-	if p.w*w.window.peak[last] <= 2 {
+	worth := w.window.worth(p)
+	if worth*w.window.peak[last] <= 2 {
 		return step, false
 	}
 	for b := first; b <= last; b++ {
-		if p.w*w.window.inverse[b] > 2 {
+		if worth*w.window.inverse[b] > 2 {
 			r := (float64(b) + 1e-6) / w.window.slope[0]
 			return math.Sqrt(max(0, r*r-near2)) - along, true
 		}

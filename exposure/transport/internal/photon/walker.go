@@ -19,7 +19,7 @@ type walker struct {
 	planes     []Plane
 	deposited  float64
 	collisions int64
-	seen       []float64 // collision weight by window bin, for the pilot
+	seen       []float64 // worth of collisions by window bin, for the pilot
 	todo       []particle
 }
 
@@ -87,7 +87,7 @@ func (w *walker) collide(p particle) {
 	in := p.w * p.e
 	p.w *= c.live + t*c.dlive
 	bin := w.window.bin(p.layer, p.z)
-	w.seen[bin] += p.w
+	w.seen[bin] += w.window.worth(&p)
 	n := w.window.split(&p, bin, w.r)
 	w.deposited += in
 	w.collisions += int64(n)

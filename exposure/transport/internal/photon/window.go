@@ -9,6 +9,7 @@ type window struct {
 	slope   []float64 // by layer: bins per g/cm2
 	begin   []float64 // by layer: depth where it starts
 	inverse [windowBins]float64
+	perKeV  float64             // one over the mean energy of the source
 	peak    [windowBins]float64 // the largest inverse up to here
 	center  [windowBins]float64 // optical depth
 }
@@ -25,6 +26,7 @@ func newWindow(g *geometry) window {
 	for i, k := range g.keV {
 		e += g.share[i] * k
 	}
+	w.perKeV = 1 / e
 	all := g.opticalDepth(e, g.bounds[len(g.bounds)-1])
 	var z, x float64
 	for i, l := range g.layers {
@@ -52,11 +54,12 @@ func (w *window) bin(layer int, z float64) int {
 // drawn anew.
 func (w *window) stop(p *particle, z float64) float64 {
 	last := w.bin(p.layer, z)
-	if p.w*w.peak[last] <= 2 {
+	worth := w.worth(p)
+	if worth*w.peak[last] <= 2 {
 		return z
 	}
 	for b := w.bin(p.layer, p.z) + 1; b <= last; b++ {
-		if p.w*w.inverse[b] > 2 {
+		if worth*w.inverse[b] > 2 {
 			// a hair inside the bin, so that rounding cannot put it back
 			return w.begin[p.layer] + (float64(b)+1e-6-w.from[p.layer])/w.slope[p.layer]
 		}
@@ -108,7 +111,7 @@ func (w *window) wanted(x float64) float64 {
 	return 1/((x+early)*math.Log1p(all/early)) + 2*x/(all*all)
 }
 
-// set gives each depth its share of the collisions. seen is the weight of
+// set gives each depth its share of the collisions. seen is the worth of
 // collisions per source photon by bin; where the pilot hardly saw a bin, it is
 // taken to fall a little faster than the source's own beam.
 func (w *window) set(seen []float64) {
@@ -134,10 +137,14 @@ func (w *window) crest() {
 
 const maxSplit = 50
 
+// worth is the weight by which a photon is judged: soft ones, which reach less
+// far and are collided with more often, count less.
+func (w *window) worth(p *particle) float64 { return p.w * math.Sqrt(p.e*w.perKeV) }
+
 // split gives the number of photons, 0 to maxSplit, that stand for p in a bin
 // of the window, and sets their weight.
 func (w *window) split(p *particle, bin int, r *random) int {
-	ratio := p.w * w.inverse[bin]
+	ratio := w.worth(p) * w.inverse[bin]
 	if ratio <= 2 && ratio >= 0.5 {
 		return 1
 	}
