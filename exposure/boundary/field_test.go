@@ -146,3 +146,13 @@ func BenchmarkContour720TenWalls(b *testing.B) {
 		f.Contour(l, 720)
 	}
 }
+
+func BenchmarkExposed(b *testing.B) {
+	p := plan.Demo()
+	p.Site.Walls = tenWalls()
+	f := fieldOf(b, tubeInput(b, p))
+	q := Vec{30, 20, 1}
+	for b.Loop() {
+		f.Exposed(q)
+	}
+}
