@@ -25,6 +25,10 @@ type Choice struct {
 	set     func(*plan.Plan, string)
 }
 
+// ChoicesOf lists every choice that a plan offers where it may name the given
+// rule sets.
+func ChoicesOf(p plan.Plan, rules []Option) []Choice { return choices(p, rules) }
+
 // ChoiceOf finds the choice of a field.
 func ChoiceOf(p plan.Plan, rules []Option, field string) (Choice, bool) {
 	for _, c := range choices(p, rules) {

@@ -118,7 +118,7 @@ func (u *UI) chargeCell() cell {
 func (u *UI) dialCell(fields ...string) []cell {
 	var out []cell
 	for _, f := range fields {
-		q, ok := desk.QuantityOf(u.s.Plan, f)
+		q, ok := u.known.quantities[f]
 		if !ok {
 			continue
 		}
@@ -136,7 +136,7 @@ func (u *UI) dialCell(fields ...string) []cell {
 func (u *UI) choiceCell(span int, fields ...string) []cell {
 	var out []cell
 	for _, f := range fields {
-		c, ok := desk.ChoiceOf(u.s.Plan, u.s.Rules, f)
+		c, ok := u.known.choices[f]
 		if !ok {
 			continue
 		}

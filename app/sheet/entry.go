@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"fmt"
+	"strconv"
 	"strings"
 
 	"halfvalue/app/desk"
@@ -79,7 +80,7 @@ func (u *UI) entryPieces(e desk.Entry) []piece {
 	}
 	var figures []string
 	for _, f := range e.Figures {
-		figures = append(figures, strings.TrimSpace(f.Name+" "+f.Value+" "+f.Unit))
+		figures = append(figures, figureText(f))
 	}
 	if len(figures) > 0 {
 		out = append(out, piece{strings.Join(figures, "\n"), plain, touch.Unit})
@@ -92,6 +93,16 @@ func (u *UI) entryPieces(e desk.Entry) []piece {
 		out = append(out, u.againPieces(*a, plain, strong)...)
 	}
 	return out
+}
+
+// figureText is a figure of an entry rounded for reading; the exact text is in
+// the record.
+func figureText(f desk.Figure) string {
+	value := f.Value
+	if v, err := strconv.ParseFloat(value, 64); err == nil {
+		value = desk.Significant(v, 4)
+	}
+	return strings.TrimSpace(capital(f.Name) + ": " + value + " " + unitText(f.Unit))
 }
 
 // againPieces say whether today's engine agrees with the entry.

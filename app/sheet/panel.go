@@ -65,7 +65,7 @@ func (u *UI) panelIn(r drafting.Rect) {
 // dialPanel draws dial and trade-off strip. The rows below the close button
 // use the whole width.
 func (u *UI) dialPanel(rest, in drafting.Rect) {
-	q, ok := desk.QuantityOf(u.s.Plan, u.s.Panel.Field)
+	q, ok := u.known.quantities[u.s.Panel.Field]
 	if !ok {
 		return
 	}
@@ -119,6 +119,7 @@ func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
 	points := make([]touch.StripPoint, len(c.Points))
 	for i, p := range c.Points {
 		points[i] = touch.StripPoint{X: in(p.X), Y: p.Seconds, Short: p.Short, Gap: p.Refused}
+		points[i].Thin, points[i].Fat = extremes(p.Density)
 	}
 	u.strip.Layout(&u.bench, r, touch.StripSpec{
 		Field: q.Field, Label: q.Label(), Points: points, Lo: in(c.From), Hi: in(c.To), Log: q.Log,
@@ -128,12 +129,33 @@ func (u *UI) tradeOff(r drafting.Rect, q desk.Quantity) {
 		YFigure: shortClock,
 		Read: func(p touch.StripPoint) string {
 			t := q.Symbol + " " + units.Format(q.Kind, units.Base(q.Kind, p.X), 3) + ": " + desk.Clock(p.Y)
+			if p.Thin > 0 {
+				t += ", D " + desk.Significant(p.Fat, 2) + " to " + desk.Significant(p.Thin, 2)
+			}
 			if p.Short {
 				t += ", a rule falls short"
 			}
 			return t
 		},
 	})
+}
+
+// extremes are the densities at the thinnest and the thickest section; 0 with
+// one section only.
+func extremes(spots []desk.Spot) (thin, thick float64) {
+	if len(spots) < 2 {
+		return 0, 0
+	}
+	lo, hi := spots[0], spots[0]
+	for _, s := range spots[1:] {
+		if s.ThicknessMM < lo.ThicknessMM {
+			lo = s
+		}
+		if s.ThicknessMM > hi.ThicknessMM {
+			hi = s
+		}
+	}
+	return lo.Density, hi.Density
 }
 
 func unitName(u desk.Units, k desk.Kind) string {

@@ -71,7 +71,7 @@ const searchFrom = 13
 
 // choicePanel lists the options of a choice as buttons.
 func (u *UI) choicePanel(r drafting.Rect) {
-	c, ok := desk.ChoiceOf(u.s.Plan, u.s.Rules, u.s.Panel.Field)
+	c, ok := u.known.choices[u.s.Panel.Field]
 	if !ok {
 		return
 	}

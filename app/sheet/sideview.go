@@ -240,7 +240,7 @@ func (u *UI) head(g sight, p plan.Plan, r drafting.Rect) {
 // open makes a target at least as large as a target must be that opens a dial
 // on a field, with the quantity's name and value as its label.
 func (u *UI) open(r drafting.Rect, field, _ string) {
-	q, ok := desk.QuantityOf(u.s.Plan, field)
+	q, ok := u.known.quantities[field]
 	if !ok {
 		return
 	}

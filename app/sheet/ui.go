@@ -28,6 +28,7 @@ type UI struct {
 	given  float64       // time given as set in the log panel, s
 	who    string
 	fields []textField   // of this frame
+	known  facts         // of the plan that is shown
 	room   drafting.Rect // where targets of the drawing may stand
 	panel  desk.Panel    // of the last frame, to start a panel afresh
 }
@@ -45,6 +46,7 @@ func New() *UI {
 // which Layout has already asked for.
 func (u *UI) Layout(gtx layout.Context, s desk.State) []desk.Intent {
 	u.s, u.intents = s, nil
+	u.know()
 	u.dress(gtx)
 	if s.Panel != u.panel {
 		u.startPanel(s.Panel)
@@ -61,6 +63,27 @@ func (u *UI) Layout(gtx layout.Context, s desk.State) []desk.Intent {
 		gtx.Execute(op.InvalidateCmd{})
 	}
 	return u.intents
+}
+
+// facts are the quantities and choices of a plan, found once for each plan and
+// not in every frame.
+type facts struct {
+	plan       string
+	quantities map[string]desk.Quantity
+	choices    map[string]desk.Choice
+}
+
+func (u *UI) know() {
+	if u.known.quantities != nil && u.known.plan == string(u.s.PlanBytes) {
+		return
+	}
+	u.known = facts{string(u.s.PlanBytes), map[string]desk.Quantity{}, map[string]desk.Choice{}}
+	for _, q := range desk.Quantities(u.s.Plan) {
+		u.known.quantities[q.Field] = q
+	}
+	for _, c := range desk.ChoicesOf(u.s.Plan, u.s.Rules) {
+		u.known.choices[c.Field] = c
+	}
 }
 
 func (u *UI) emit(in desk.Intent) { u.intents = append(u.intents, in) }

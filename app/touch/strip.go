@@ -17,9 +17,10 @@ type Strip struct {
 
 // StripPoint is one reckoned point.
 type StripPoint struct {
-	X, Y  float64
-	Short bool
-	Gap   bool // no answer here
+	X, Y      float64
+	Thin, Fat float64 // density at the thinnest and the thickest section; both 0: not shown
+	Short     bool
+	Gap       bool // no answer here
 }
 
 // StripSpec is what the strip shows.
@@ -54,6 +55,7 @@ func (t *Strip) Layout(b *Bench, r drafting.Rect, s StripSpec) {
 	b.Vertical(drafting.Scale{Axis: y, Across: plot.X0, Reach: plot.X1, Size: small, Marks: timeMarks(), Format: s.YFigure})
 	b.Horizontal(drafting.Scale{Axis: x, Across: plot.Y1, Reach: plot.Y0, Size: small, Count: max(2, int(plot.W()/(small*5))), Format: s.XFigure})
 	b.Clip(drafting.Box(plot))
+	t.densities(b, s, x, plot)
 	t.curve(b, s, x, y)
 	b.Unclip()
 	t.today(b, s, x, y, plot)
@@ -131,6 +133,41 @@ func (t *Strip) curve(b *Bench, s StripSpec, x, y drafting.Axis) {
 	}
 }
 
+// densities draws the density at the thinnest and the thickest section on a
+// scale of its own, 0 at the foot and 5 at the top, labelled at their ends.
+func (t *Strip) densities(b *Bench, s StripSpec, x drafting.Axis, plot drafting.Rect) {
+	d := drafting.Axis{Lo: 0, Hi: 5, From: plot.Y1, To: plot.Y0}
+	var thin, fat drafting.Path
+	var last StripPoint
+	for _, q := range s.Points {
+		if q.Gap || q.Thin <= 0 || q.Fat <= 0 {
+			continue
+		}
+		a, c := drafting.Pt{X: x.At(q.X), Y: d.At(q.Thin)}, drafting.Pt{X: x.At(q.X), Y: d.At(q.Fat)}
+		if thin.Empty() {
+			thin.MoveTo(a)
+			fat.MoveTo(c)
+		} else {
+			thin.LineTo(a)
+			fat.LineTo(c)
+		}
+		last = q
+	}
+	if last.X == 0 {
+		return
+	}
+	b.Stroke(thin, drafting.Medium, drafting.Faint, 8, 4)
+	b.Stroke(fat, drafting.Medium, drafting.Faint, 2, 3)
+	st := drafting.Style{Size: b.Look.Small(), Ink: drafting.Line, Align: drafting.End, Knock: true}
+	at := func(v float64) drafting.Pt {
+		return drafting.Pt{X: min(x.At(last.X), plot.X1) - 6, Y: clamp(d.At(v)-5, plot.Y0+st.Size, plot.Y1-4)}
+	}
+	if a, c := at(last.Thin), at(last.Fat); c.Y-a.Y > st.Size*1.3 {
+		b.Text(a, "D thin", st)
+		b.Text(c, "D thick", st)
+	}
+}
+
 // today marks the plan's own point.
 func (t *Strip) today(b *Bench, s StripSpec, x, y drafting.Axis, plot drafting.Rect) {
 	at := drafting.Pt{X: x.At(s.Now.X), Y: y.At(s.Now.Y)}
@@ -185,7 +222,7 @@ func between(points []StripPoint, x float64) (StripPoint, bool) {
 		if t > 0.5 {
 			near = b
 		}
-		return StripPoint{X: x, Y: a.Y * math.Pow(b.Y/a.Y, t), Short: near.Short}, true
+		return StripPoint{X: x, Y: a.Y * math.Pow(b.Y/a.Y, t), Thin: a.Thin + t*(b.Thin-a.Thin), Fat: a.Fat + t*(b.Fat-a.Fat), Short: near.Short}, true
 	}
 	return StripPoint{}, false
 }
