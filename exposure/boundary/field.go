@@ -46,7 +46,7 @@ type Field struct {
 	throughAt1m          float64 // behind the part
 	credited             bool    // every ray of the cone is proved to pass the part
 	part                 Vec     // where the beam meets it
-	scatterAt1m          []float64
+	scatterAt1m          [angles]float64
 	skyBeam, skyAllRound *sky
 	leakShare            float64 // leakage to open beam
 	shields              *shields
@@ -162,7 +162,9 @@ func (f *Field) scattered(half float64) error {
 	if err != nil {
 		return err
 	}
-	f.scatterAt1m = byDeg
+	for i := range f.scatterAt1m {
+		f.scatterAt1m[i] = inTable(byDeg, nodeDeg(i))
+	}
 	f.skyBeam = newSky(in.Spectrum, half, scale)
 	f.skyAllRound = f.skyBeam
 	if half < 90 {
@@ -265,12 +267,12 @@ func (f *Field) offAir(r, cos float64, inBeam bool, pass, passLeak float64) floa
 	var h float64
 	switch {
 	case !inBeam:
-		h = f.skyBeam.rate(acosDeg(cos), r)
+		h = f.skyBeam.rate(cos, r)
 	case pass < 1:
-		h = min(f.skyBeam.rate(acosDeg(cos), r), f.openAt1m/(2*r*r)) * (1 - pass)
+		h = min(f.skyBeam.rate(cos, r), f.openAt1m/(2*r*r)) * (1 - pass)
 	}
 	if passLeak < 1 {
-		h += min(f.skyAllRound.rate(0, r)*f.leakShare, f.leakAt1m/(2*r*r)) * (1 - passLeak)
+		h += min(f.skyAllRound.rate(1, r)*f.leakShare, f.leakAt1m/(2*r*r)) * (1 - passLeak)
 	}
 	return h
 }
@@ -297,7 +299,7 @@ func (f *Field) meetsPart(way Vec, cos float64) bool {
 func (f *Field) offPart(q Vec) float64 {
 	way := q.minus(f.part)
 	r2 := max(way.dot(way), leastDistanceM*leastDistanceM)
-	h := inTable(f.scatterAt1m, acosDeg(way.dot(f.axis)/math.Sqrt(r2))) / r2
+	h := byCos(&f.scatterAt1m, way.dot(f.axis)/math.Sqrt(r2)) / r2
 	return h * f.shields.pass(f.part, q, ofBeam)
 }
 

@@ -42,7 +42,7 @@ func (s *search) outside(allowed float64) float64 {
 	total := f.openAt1m + f.leakAt1m
 	perM := 0.0
 	if !f.noScatter {
-		total += slices.Max(f.scatterAt1m) + math.Exp(slices.Max(f.bareGround.lnR2H)) + math.Exp(slices.Max(f.ground.lnR2H))
+		total += slices.Max(f.scatterAt1m[:]) + math.Exp(slices.Max(f.bareGround.lnR2H)) + math.Exp(slices.Max(f.ground.lnR2H))
 		perM = slices.Max(f.skyBeam.k[0][:]) + f.skyAllRound.k[0][0]*(1+f.leakShare)
 	}
 	stored := 0.0
@@ -135,7 +135,10 @@ func (r *ray) at(m, allowed float64) float64 {
 // table is made so. So one look at either end of each stretch is enough.
 func (r *ray) crossings(allowed, outside, inner, hint float64) []float64 {
 	var found []float64
-	hi, vHi := outside, r.at(outside, allowed)
+	hi, vHi := outside, 0.5 // below 1 by how outside is found; roots need no more
+	if outside >= farthestM {
+		vHi = r.at(outside, allowed)
+	}
 	for i := 0; hi > inner; i++ {
 		if vHi > deepInside && hi < r.wallsTo && hi < 2*r.s.offsetM+0.1 {
 			break

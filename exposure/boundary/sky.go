@@ -27,7 +27,8 @@ const (
 // nothing off. What of a cone points down is counted as if there were no
 // ground; of a source bare all round one half is.
 type sky struct {
-	k [len(skyNodesM)][skyAngles]float64 // uSv/h m
+	k    [len(skyNodesM)][skyAngles]float64 // uSv/h m
+	fine [len(skyNodesM)][angles]float64
 }
 
 // Nodes; between them it is straight, above the true, sagging curve of the
@@ -55,21 +56,33 @@ func newSky(s beam.Spectrum, halfDeg, scale float64) *sky {
 			}
 		}
 	}
-	return out
+	return out.refine()
 }
 
-// rate gives uSv/h at an angle from the axis and a distance.
-func (s *sky) rate(deg, m float64) float64 {
+// rate gives uSv/h at the cosine of an angle from the axis and a distance.
+func (s *sky) rate(cos, m float64) float64 {
 	d := 0
 	for d < len(skyNodesM)-2 && m > skyNodesM[d+1] {
 		d++
 	}
 	t := min(1, (m-skyNodesM[d])/(skyNodesM[d+1]-skyNodesM[d]))
-	x := deg / skyStepDeg
-	i := min(int(x), skyAngles-2)
+	x := math.Sqrt(max(0, 1-cos)/2) * (angles - 1)
+	i := min(int(x), angles-2)
 	x -= float64(i)
-	lo, hi := &s.k[d], &s.k[d+1]
+	lo, hi := &s.fine[d], &s.fine[d+1]
 	return ((lo[i]*(1-x)+lo[i+1]*x)*(1-t) + (hi[i]*(1-x)+hi[i+1]*x)*t) / m
+}
+
+// refine tables k by the nodes that rate reads.
+func (s *sky) refine() *sky {
+	for d := range s.k {
+		for i := range angles {
+			x := nodeDeg(i) / skyStepDeg
+			a := min(int(x), skyAngles-2)
+			s.fine[d][i] = s.k[d][a] + (s.k[d][a+1]-s.k[d][a])*(x-float64(a))
+		}
+	}
+	return s
 }
 
 // skyTailTable is n times the integral of dsigma/dOmega H*(10)(E') from phi to

@@ -49,7 +49,7 @@ func (f *Field) bareFrom(s, a, b, q Vec) float64 {
 	if f.noScatter {
 		return h * pass
 	}
-	return h*pass + min(f.skyAllRound.rate(0, r), h/2)*(1-pass)
+	return h*pass + min(f.skyAllRound.rate(1, r), h/2)*(1-pass)
 }
 
 func nearestOn(a, b, q Vec) Vec {

@@ -15,6 +15,21 @@ func (v Vec) distance(w Vec) float64 { return v.minus(w).length() }
 func cosDeg(deg float64) float64     { return math.Cos(deg * math.Pi / 180) }
 func sinDeg(deg float64) float64     { return math.Sin(deg * math.Pi / 180) }
 func acosDeg(c float64) float64      { return math.Acos(max(-1, min(1, c))) * 180 / math.Pi }
+
+// angles is how many nodes a table by scattering angle has: evenly in the sine
+// of half the angle, which costs a root instead of an arc.
+const angles = 241
+
+// nodeDeg is the angle of a node.
+func nodeDeg(i int) float64 { return 2 * math.Asin(float64(i)/(angles-1)) * 180 / math.Pi }
+
+// byCos reads a table by angle at the angle's cosine.
+func byCos(t *[angles]float64, cos float64) float64 {
+	x := math.Sqrt(max(0, 1-cos)/2) * (angles - 1)
+	i := min(int(x), angles-2)
+	return t[i] + (t[i+1]-t[i])*(x-float64(i))
+}
+
 func inTable(t []float64, deg float64) float64 {
 	i := min(int(deg), len(t)-2)
 	return t[i] + (t[i+1]-t[i])*(deg-float64(i))
