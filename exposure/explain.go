@@ -20,7 +20,7 @@ func (s *shot) explain(r *Reckoning, factor float64) error {
 		}
 	}
 	ref := s.ref
-	steps := slices.Concat(head, s.beamSteps(r), s.partSteps(ref), s.timeSteps(r, ref, factor), s.imageSteps(r))
+	steps := slices.Concat(head, s.beamSteps(r), s.partSteps(ref), s.timeSteps(r, ref, factor), s.imageSteps(r), lookSteps(r.Image))
 	r.Workings = append(steps, r.Workings...)
 	return nil
 }

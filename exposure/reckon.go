@@ -103,12 +103,18 @@ func (s *shot) expose(r *Reckoning, factor float64) error {
 // image reads density or signal to noise ratio at every section.
 func (s *shot) image(r *Reckoning, ref field, seconds float64) error {
 	s.spot(r, "part", ref, seconds)
+	if err := s.look(r, "part", s.plan.Part.Layers, ref, seconds); err != nil {
+		return err
+	}
 	for _, section := range s.plan.Part.Sections {
 		f, err := s.behind(section.Layers)
 		if err != nil {
 			return err
 		}
 		s.spot(r, section.Name, f, seconds)
+		if err := s.look(r, section.Name, section.Layers, f, seconds); err != nil {
+			return err
+		}
 	}
 	return nil
 }

@@ -21,6 +21,7 @@ type Reckoning struct {
 	Boundary []boundary.Line `json:"boundary"`
 	Cautions []string        `json:"cautions"`
 
+	Image    []Image        `json:"image"`    // what each place shows, in the order of Density or SNR
 	Spread   []Contribution `json:"spread"`   // largest first
 	Geometry Geometry       `json:"geometry"` // of the central ray
 	Source   SourceState    `json:"source"`

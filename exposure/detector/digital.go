@@ -100,3 +100,6 @@ func (q Quanta) PerUnit() float64 {
 	}
 	return q.sum * q.sum / q.square
 }
+
+// AbsorbedKeV gives the energy absorbed per cm2 and unit of exposure: the signal.
+func (q Quanta) AbsorbedKeV() float64 { return q.sum }

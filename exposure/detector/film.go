@@ -139,3 +139,15 @@ func (f Film) Gradient(density float64) float64 {
 	}
 	return math.Ln10 * f.p * -math.Log1p(-net/f.dm) * (f.dm - net)
 }
+
+// SNRn gives the normalised signal to noise ratio at an optical density, base
+// and fog included: log10(e) G/sigma over the 100 um circle of ISO 11699-1,
+// whose area is that of the square of 88.6 um of ISO 17636-2. The class's
+// granularity at density 2 above base and fog goes with the root of density.
+func (f Film) SNRn(density float64) float64 {
+	net := density - f.BaseAndFog
+	if net <= 0 {
+		return 0
+	}
+	return f.Gradient(density) / math.Ln10 / (f.Granularity * math.Sqrt(net/2))
+}
