@@ -11,7 +11,7 @@
 // it needs of the world comes through Platform. It will never compute physics:
 // that is the Reckoner's, and it will never draw.
 //
-//	d := desk.Open(platform, reckoner)
+//	d := desk.Open(platform, desk.Options{Reckon: desk.Engine(exposure.Calibration{})})
 //	d.Apply(desk.Set{Field: "setup.sfdMM", To: 820})
 //	d.Apply(desk.Undo{})
 //	s := d.State()

@@ -12,7 +12,7 @@
 // meaning, dimension text parallel to its line and above it, break lines
 // where a distance is cut short, hatches that tell materials apart.
 //
-//	d := drafting.New(type_, drafting.Rect{X1: 400, Y1: 300})
+//	d := drafting.New(drafting.NewFonts(), drafting.Rect{X1: 400, Y1: 300})
 //	d.Line(drafting.Pt{X: 20, Y: 20}, drafting.Pt{X: 380, Y: 20}, drafting.Bold, drafting.Line)
-//	d.Dimension(drafting.Dimension{A: a, B: b, Off: 24, Text: "SFD 700 mm"})
+//	d.Dimension(drafting.Dimension{A: a, B: b, Off: 24, Text: "SFD 700 mm", Size: 14})
 package drafting

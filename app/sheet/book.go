@@ -115,24 +115,51 @@ func (u *UI) entries(r drafting.Rect) {
 		b.Paragraph(r, "No entry yet. A shot that is logged on the Shot sheet stands here, and nothing is ever changed or deleted.", u.look.Plain())
 		return
 	}
-	row := max(u.look.Target, u.look.Body()*1.3+u.look.Small()*1.3*2+touch.Unit)
-	b.Scroll("Entries", r, float64(len(page))*(row+4), func(in drafting.Rect) {
+	heights := make([]float64, len(page))
+	full := 0.0
+	for i, e := range page {
+		heights[i] = u.rowHeight(r.W()-u.look.Target, e) + 4
+		full += heights[i]
+	}
+	b.Scroll("Entries", r, full, func(in drafting.Rect) {
+		y := in.Y0
 		for i, e := range page {
-			y := in.Y0 + float64(i)*(row+4)
-			box := drafting.Rect{X0: in.X0, Y0: y, X1: in.X1, Y1: y + row}
-			if box.Y1 < r.Y0 || box.Y0 > r.Y1 {
-				continue
+			box := drafting.Rect{X0: in.X0, Y0: y, X1: in.X1, Y1: y + heights[i] - 4}
+			y += heights[i]
+			if box.Y1 >= r.Y0 && box.Y0 <= r.Y1 {
+				u.entryRow(box, e)
 			}
-			u.entryRow(box, e)
 		}
 	})
+}
+
+// numberRoom is the width that an entry's number takes at the left of its row.
+func (u *UI) numberRoom(e desk.Entry) float64 {
+	w := u.bench.Fonts.Width(fmt.Sprint(e.Number), u.look.Body(), true)
+	return max(w, u.bench.Fonts.Width("000", u.look.Body(), true)) + 2.5*touch.Unit
+}
+
+// rowTexts are the lines of an entry in the list.
+func (u *UI) rowTexts(e desk.Entry) [3]piece {
+	return [3]piece{
+		{text: e.Title, style: u.look.Strong()},
+		{text: e.At.Format("2006-01-02 15:04") + ", " + e.By, style: u.look.Caption()},
+		{text: "given " + desk.Clock(e.GivenSeconds) + ", planned " + e.Planned, style: u.look.Caption()},
+	}
+}
+
+func (u *UI) rowHeight(width float64, e desk.Entry) float64 {
+	h := float64(touch.Unit)
+	for _, t := range u.rowTexts(e) {
+		h += u.bench.Height(width-u.numberRoom(e)-touch.Unit, t.text, t.style)
+	}
+	return max(u.look.Target, h)
 }
 
 func (u *UI) entryRow(r drafting.Rect, e desk.Entry) {
 	b := &u.bench
 	open := u.s.Book.Open != nil && u.s.Book.Open.Number == e.Number
 	label := fmt.Sprintf("Entry %d, %s", e.Number, e.Title)
-	ink := drafting.Line
 	switch {
 	case open || b.Pressed(label):
 		b.Fill(drafting.Box(r), drafting.BeamWash)
@@ -141,22 +168,14 @@ func (u *UI) entryRow(r drafting.Rect, e desk.Entry) {
 		b.Fill(drafting.Box(r), drafting.Block)
 		b.Line(drafting.Pt{X: r.X0, Y: r.Y1}, drafting.Pt{X: r.X1, Y: r.Y1}, drafting.Hair, drafting.Faint)
 	}
-	number := fmt.Sprint(e.Number)
-	strong, cap := u.look.Strong(), u.look.Caption()
-	strong.Ink = ink
-	wide := max(b.Fonts.Width("0000", strong.Size, true), b.Fonts.Width(number, strong.Size, true))
-	x := r.X0 + touch.Unit
-	y := r.Y0 + touch.Unit/2 + drafting.Ascent*strong.Size
-	end := strong
+	room := u.numberRoom(e)
+	end := u.look.Strong()
 	end.Align = drafting.End
-	b.Text(drafting.Pt{X: x + wide, Y: y}, number, end)
-	left := x + wide + touch.Unit*1.5
-	width := r.X1 - touch.Unit - left
-	b.Text(drafting.Pt{X: left, Y: y}, b.Fit(e.Title, width, strong), strong)
-	y += u.look.Small() * 1.3
-	b.Text(drafting.Pt{X: left, Y: y}, b.Fit(e.At.Format("2006-01-02 15:04")+"  "+e.By, width, cap), cap)
-	y += u.look.Small() * 1.3
-	b.Text(drafting.Pt{X: left, Y: y}, b.Fit("given "+desk.Clock(e.GivenSeconds)+", planned "+e.Planned, width, cap), cap)
+	b.Text(drafting.Pt{X: r.X0 + room - 1.5*touch.Unit, Y: r.Y0 + touch.Unit/2 + drafting.Ascent*end.Size}, fmt.Sprint(e.Number), end)
+	in := drafting.Rect{X0: r.X0 + room, Y0: r.Y0 + touch.Unit/2, X1: r.X1 - touch.Unit, Y1: r.Y1}
+	for _, t := range u.rowTexts(e) {
+		in.Y0 += b.Paragraph(in, t.text, t.style)
+	}
 	b.Target(r, label, u.do(desk.OpenEntry{Number: e.Number}))
 	b.Ring(label, r)
 }
