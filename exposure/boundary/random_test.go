@@ -131,7 +131,7 @@ func sites(t *testing.T, short int) int {
 func TestRandomSites(t *testing.T) {
 	rng := rand.New(rand.NewPCG(7, 7))
 	worst := 0.0
-	for n := range sites(t, 150) {
+	for n := range sites(t, 60) {
 		in := randomInput(t, rng)
 		walled := in
 		walled.Plan.Site.Walls = append([]plan.Wall{{Name: "new", Material: "concrete", MM: 150, HeightM: 3,

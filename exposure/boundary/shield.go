@@ -181,8 +181,8 @@ func (sh *shields) through(mm *[mostMaterials]float64, airMM float64, q quality)
 	return math.Exp(best + slopes)
 }
 
-// barrier is the broad-beam transmission of one material for one spectrum as
-// H*(10), straight in its logarithm between nodes: the curve sags, so that the
+// barrier is the broad-beam transmission of wallCredit of a thickness of one
+// material for one spectrum as H*(10), straight in its logarithm between nodes: the curve sags, so that the
 // chord errs outward.
 type barrier struct {
 	firstMM, lnStep float64
@@ -192,11 +192,17 @@ type barrier struct {
 
 const barrierStep = 1.15
 
+// wallCredit is the share of a wall's thickness that is counted: what our
+// Monte Carlo lacks against the largest published broad-beam layers at high
+// attenuation (Co-60 in concrete, 0.86), so that dose behind walls is nowhere
+// under-predicted against them by more than 5 %. It covers loose concrete too.
+const wallCredit = 0.85
+
 func newBarrier(m *materials.Material, leastMM, mostMM float64, s beam.Spectrum) (*barrier, error) {
 	mostMM = min(mostMM, 1e5)
 	b := &barrier{firstMM: leastMM, lnStep: math.Log(barrierStep)}
 	for mm := leastMM; len(b.mm) < 3 || b.mm[len(b.mm)-1] < mostMM; mm *= barrierStep {
-		t := transport.BroadTransmission(m, min(mm, 1e5), s.KeV, s.PerCM2, ambientPerFluence)
+		t := transport.BroadTransmission(m, wallCredit*min(mm, 1e5), s.KeV, s.PerCM2, ambientPerFluence)
 		if !(t >= 0) {
 			_, err := transport.Slab([]transport.Layer{{Material: m, MM: mm}}, s.KeV, s.PerCM2)
 			return nil, err
