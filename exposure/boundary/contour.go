@@ -34,15 +34,13 @@ const farthestM = 1e5
 
 // Contour finds where level is met on n bearings and on those where walls and
 // beam begin and end. Roots are exact and none is skipped; see crossings.
-func (f *Field) Contour(l Level, n int) Contour { return f.ContourAt(l, f.site.LevelM, n) }
-
-// ContourAt is Contour at another height above ground.
-func (f *Field) ContourAt(l Level, levelM float64, n int) Contour {
+func (f *Field) Contour(l Level, n int) Contour {
+	levelM := f.site.LevelM
 	c := Contour{Limit: l.Name, LevelM: levelM, BearingsDeg: f.bearings(n)}
 	m := len(c.BearingsDeg)
 	c.Metres, c.RopeMetres = make([]float64, m), make([]float64, m)
 	crossings := make([][]float64, m)
-	s := f.search(l, levelM)
+	s := f.search(l)
 	inParallel(m, func(from, to int) {
 		r, near := s.ray(), 0.0
 		for i := from; i < to; i++ {
@@ -65,7 +63,7 @@ func (f *Field) ContourAt(l Level, levelM float64, n int) Contour {
 
 // Distance gives the outermost crossing on one bearing, m.
 func (f *Field) Distance(l Level, bearingDeg float64) float64 {
-	s := f.search(l, f.site.LevelM)
+	s := f.search(l)
 	r := s.ray()
 	r.turn(bearingDeg, s.outsideM)
 	return outermost(r.crossings(l.USvPerH, s.outsideM, LeastRopeM, 0))

@@ -54,6 +54,7 @@ type Field struct {
 	ground, bareGround   *around
 	factor               float64 // what meter readings multiply the whole field by
 	noScatter, noLeakage bool
+	traced               bool // credit the part to each ray that passes it
 	bareDiffers          bool // sealed source: bare on its way, else the same as exposed
 }
 
@@ -88,6 +89,26 @@ func NewField(in Input, opts ...Option) (*Field, error) {
 		return f, nil
 	}
 	return f, f.scattered(half)
+}
+
+// AtLevel gives the field with its plan view at another height above ground.
+func (f *Field) AtLevel(levelM float64) *Field {
+	g := *f
+	g.site.LevelM = levelM
+	if !f.noScatter {
+		g.tabulate()
+	}
+	return &g
+}
+
+// tabulate tables the scatter off ground and walls on the plan view's level.
+func (f *Field) tabulate() {
+	b := f.site.Beam.BearingDeg
+	f.ground = newAround(f.focus, b, f.site.LevelM, f.patches, f.shields)
+	f.bareGround = f.ground
+	if f.bareDiffers && f.cosHalf > -1 {
+		f.bareGround = newAround(f.focus, b, f.site.LevelM, f.barePatches, f.shields)
+	}
 }
 
 // halfCone is half the opening of the useful beam; 180 where nothing shields
@@ -185,13 +206,11 @@ func (f *Field) scattered(half float64) error {
 	}
 	b := f.site.Beam.BearingDeg
 	f.patches = lit(f.focus, f.axis, b, half, f.shields, ground, walls)
-	f.ground = newAround(f.focus, b, f.site.LevelM, f.patches, f.shields)
+	f.barePatches = f.patches
 	if f.bareDiffers && half < 180 {
 		f.barePatches = lit(f.focus, f.axis, b, 180, f.shields, ground, walls)
-		f.bareGround = newAround(f.focus, b, f.site.LevelM, f.barePatches, f.shields)
-		return nil
 	}
-	f.barePatches, f.bareGround = f.patches, f.ground
+	f.tabulate()
 	return nil
 }
 
@@ -228,7 +247,7 @@ func (in Input) scatterByDeg() ([]float64, error) {
 // the rope takes it: the part is credited only where every ray is proved to
 // pass it.
 func (f *Field) Exposed(q Vec) Parts {
-	return f.exposed(q, false)
+	return f.exposed(q, f.traced)
 }
 
 // Traced is Exposed with the part's credit given to every ray that passes it:
@@ -252,7 +271,9 @@ func (f *Field) exposed(q Vec, traced bool) Parts {
 	if inBeam {
 		p.Beam = open / r2 * pass
 	}
-	p.Leakage = f.leakAt1m / r2 * passLeak
+	if !inBeam || f.in.Plan.Source.Tube != nil { // a collimator leaks outside its opening only
+		p.Leakage = f.leakAt1m / r2 * passLeak
+	}
 	if !f.noScatter {
 		p.Scatter = f.offPart(q)
 		p.Ground = f.offGround(q, f.ground, f.patches)

@@ -34,7 +34,7 @@ type Line struct {
 	Direction  string  `json:"direction"`
 	Metres     float64 `json:"metres"`           // unrounded, without spread; 1 where the limit is met within 1 m
 	Within     bool    `json:"within,omitempty"` // the limit is not exceeded at 1 m or beyond
-	RopeMetres float64 `json:"ropeMetres"`       // with the output's uncertainty: where the rope stands
+	RopeMetres float64 `json:"ropeMetres"`       // with the output's uncertainty and what meter readings found above the prediction: where the rope stands
 	RateAt1m   float64 `json:"rateUSvPerHAt1m"`  // H*(10) rate while the beam is on
 	Allowed    float64 `json:"allowedUSvPerH"`   // what the limit comes to as a rate
 }
@@ -63,7 +63,11 @@ func Lines(in Input) ([]Line, []working.Step, error) {
 	for _, r := range rates {
 		steps = append(steps, r.step)
 	}
-	spread := in.spread()
+	factor, err := in.ropeFactor()
+	if err != nil {
+		return nil, nil, err
+	}
+	spread := (1+in.spread())*factor - 1
 	for _, limit := range in.Plan.Site.Limits {
 		allowed, step := in.allowed(limit)
 		steps = append(steps, step)
@@ -134,7 +138,7 @@ func (l Line) step(spread float64) working.Step {
 		ID: "boundary." + l.Limit + "." + l.Direction, Name: fmt.Sprintf("distance for %s, %s", l.Limit, l.Direction), Symbol: "r", Formula: "r = sqrt(H'1 / H'L) m",
 		Inputs: []working.Input{{Symbol: "H'1", Value: l.RateAt1m, Unit: "uSv/h"}, {Symbol: "H'L", Value: l.Allowed, Unit: "uSv/h"}},
 		Value:  l.Metres, Unit: "m", Source: "inverse square",
-		Note: fmt.Sprintf("no air taken off; the rope stands at %.4g m, with the output %.0f %% higher", l.RopeMetres, spread*100),
+		Note: fmt.Sprintf("no air taken off; the rope stands at %.4g m, with the output, and meter readings, %.0f %% higher", l.RopeMetres, spread*100),
 	}
 }
 

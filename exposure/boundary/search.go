@@ -16,8 +16,8 @@ type search struct {
 	outsideM, ropeOutsideM float64 // the level, and with the spread the rope, is met from here on
 }
 
-func (f *Field) search(l Level, levelM float64) *search {
-	s := &search{f: f, level: l, levelM: levelM}
+func (f *Field) search(l Level) *search {
+	s := &search{f: f, level: l, levelM: f.site.LevelM}
 	if !f.noScatter {
 		s.others = append(s.others, f.part)
 	}
@@ -97,14 +97,9 @@ func (r *ray) turn(bearingDeg, most float64) {
 }
 
 // face keeps only the walls that a way to a place on the bearing can meet,
-// from the focus or from what stands beside it. On other levels than the plan
-// view's ground scatter is not tabled, and every wall stays.
+// from the focus or from what stands beside it.
 func (r *ray) face() {
 	f, u := r.s.f, r.u
-	if r.s.levelM != f.site.LevelM {
-		r.shields.legs = f.shields.legs
-		return
-	}
 	side := func(x, y float64) float64 { return (x-f.focus.X)*u.Y - (y-f.focus.Y)*u.X }
 	least, most := 0.0, 0.0
 	for _, o := range r.s.others {
