@@ -26,6 +26,10 @@ func (u *UI) bookSheet(area drafting.Rect) {
 		if v.Open != nil {
 			u.entry(entry, *v.Open)
 		} else {
+			if len(v.Page) > 0 && !u.opened {
+				u.emit(desk.OpenEntry{Number: v.Page[0].Number}) // there is room for one beside the list
+			}
+			u.opened = true
 			b.Paragraph(entry.Inset(2*touch.Unit), "Touch an entry to see its plan, its figures and their working.", u.look.Plain())
 		}
 		return
@@ -144,8 +148,22 @@ func (u *UI) rowTexts(e desk.Entry) [3]piece {
 	return [3]piece{
 		{text: e.Title, style: u.look.Strong()},
 		{text: e.At.Format("2006-01-02 15:04") + ", " + e.By, style: u.look.Caption()},
-		{text: "given " + desk.Clock(e.GivenSeconds) + ", planned " + e.Planned, style: u.look.Caption()},
+		{text: "given " + desk.Clock(e.GivenSeconds) + ", planned " + plannedText(e), style: u.look.Caption()},
 	}
+}
+
+// plannedText is the exposure as planned in one line.
+func plannedText(e desk.Entry) string {
+	x := e.Then
+	switch {
+	case x.Seconds == 0:
+		return e.Planned
+	case x.GBqMin > 0:
+		return desk.Clock(x.Seconds) + ", " + desk.Significant(x.GBqMin, 3) + " GBq min"
+	case x.MAMin > 0:
+		return desk.Clock(x.Seconds) + ", " + desk.Significant(x.MAMin, 3) + " mA min"
+	}
+	return desk.Clock(x.Seconds)
 }
 
 func (u *UI) rowHeight(width float64, e desk.Entry) float64 {
@@ -159,9 +177,9 @@ func (u *UI) rowHeight(width float64, e desk.Entry) float64 {
 func (u *UI) entryRow(r drafting.Rect, e desk.Entry) {
 	b := &u.bench
 	open := u.s.Book.Open != nil && u.s.Book.Open.Number == e.Number
-	label := fmt.Sprintf("Entry %d, %s", e.Number, e.Title)
+	label, key := fmt.Sprintf("Entry %d, %s", e.Number, e.Title), fmt.Sprintf("entry %d", e.Number)
 	switch {
-	case open || b.Pressed(label):
+	case open || b.Pressed(key):
 		b.Fill(drafting.Box(r), drafting.BeamWash)
 		b.Frame(r, drafting.Bold, drafting.Line)
 	default:
@@ -176,6 +194,6 @@ func (u *UI) entryRow(r drafting.Rect, e desk.Entry) {
 	for _, t := range u.rowTexts(e) {
 		in.Y0 += b.Paragraph(in, t.text, t.style)
 	}
-	b.Target(r, label, u.do(desk.OpenEntry{Number: e.Number}))
-	b.Ring(label, r)
+	b.Target(r, key, label, u.do(desk.OpenEntry{Number: e.Number}))
+	b.Ring(key, r)
 }

@@ -73,7 +73,7 @@ func (u *UI) entryPieces(e desk.Entry) []piece {
 	local := e.At.Format("2006-01-02 15:04:05 -07:00")
 	out := []piece{
 		{"Logged " + local + " by " + e.By, plain, 0},
-		{"Given " + desk.Clock(e.GivenSeconds) + "; planned " + e.Planned, plain, 0},
+		{"Given " + desk.Clock(e.GivenSeconds) + "; planned " + plannedText(e), plain, 0},
 	}
 	if e.Note != "" {
 		out = append(out, piece{"Note: " + e.Note, plain, 0})

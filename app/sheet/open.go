@@ -27,8 +27,9 @@ func (u *UI) openAs(r drafting.Rect, label string, p desk.Panel) {
 		r.Y0, r.Y1 = r.Y0-h/2, r.Y1+h/2
 	}
 	r = inside(r, u.room)
-	u.bench.Target(r, label, u.toggle(p))
-	u.bench.Ring(label, r)
+	key := u.place + string(p.Kind) + " " + p.Field
+	u.bench.Target(r, key, label, u.toggle(p))
+	u.bench.Ring(key, r)
 	if u.s.Panel == p {
 		u.bench.Stroke(drafting.Box(r.Inset(1)), drafting.Medium, drafting.Beam)
 	}

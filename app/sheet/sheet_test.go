@@ -137,7 +137,7 @@ func TestFocusAndReturnOpen(t *testing.T) {
 	for range 40 {
 		x.router.MoveFocus(key.FocusForward)
 		x.frames(2)
-		if !x.ui.bench.Focused("Dial U tube voltage, 200 kV") {
+		if !x.ui.bench.Focused("cell U tube voltagedial source.tube.kv") {
 			continue
 		}
 		x.queue(key.Event{Name: key.NameReturn, State: key.Press})

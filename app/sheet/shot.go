@@ -115,7 +115,7 @@ func (u *UI) stamp(r drafting.Rect, c desk.Check) {
 		m = touch.Open
 	}
 	room := r.W() - u.look.Target - 2*touch.Unit
-	u.bench.Stamp(touch.Stamp{Box: r, Mark: m, Name: u.bench.Fit(capital(c.Name), room, drafting.Style{Size: u.look.Small(), Bold: true}), Text: u.stampText(c, room),
+	u.bench.Stamp(touch.Stamp{Box: r, Mark: m, Key: c.ID, Name: u.bench.Fit(capital(c.Name), room, drafting.Style{Size: u.look.Small(), Bold: true}), Text: u.stampText(c, room),
 		Label: capital(c.Name) + ": " + verdictWord(c.Verdict) + ". " + u.checkText(c), Do: u.toggle(desk.Panel{Kind: desk.CheckPanel, Field: c.ID})})
 }
 
@@ -163,10 +163,10 @@ func (u *UI) drawing(view drafting.Rect) {
 	if view.W()-width >= left+right+64 && u.sectionFits(view.H(), width) {
 		section, side = view.CutRight(width)
 	}
-	u.room = side
+	u.room, u.place = side, "side "
 	u.sideView(side, !section.Empty())
 	if !section.Empty() {
-		u.room = section
+		u.room, u.place = section, "section "
 		u.detailView(section)
 	}
 }

@@ -117,7 +117,7 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	b := &u.bench
 	open := c.panel.Kind != desk.NoPanel && u.s.Panel == c.panel
 	switch {
-	case open || (c.label != "" && b.Pressed(c.label)):
+	case open || b.Pressed(c.key()):
 		b.Fill(drafting.Box(r), drafting.BeamWash)
 	case c.touchable():
 		b.Fill(drafting.Box(r.Inset(0.5)), drafting.Block)
@@ -153,9 +153,12 @@ func (u *UI) cell(r drafting.Rect, c cell) {
 	if c.do != nil {
 		act = u.do(c.do)
 	}
-	b.Target(r, label, act)
-	b.Ring(label, r)
+	b.Target(r, c.key(), label, act)
+	b.Ring(c.key(), r)
 }
+
+// key is the cell's identity from frame to frame.
+func (c cell) key() string { return "cell " + c.caption + string(c.panel.Kind) + " " + c.panel.Field }
 
 func (c cell) touchable() bool { return c.panel.Kind != desk.NoPanel || c.do != nil }
 

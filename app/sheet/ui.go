@@ -28,8 +28,10 @@ type UI struct {
 	given  float64       // time given as set in the log panel, s
 	who    string
 	fields []textField   // of this frame
+	opened bool          // the newest entry has been opened beside the list once
 	known  facts         // of the plan that is shown
 	room   drafting.Rect // where targets of the drawing may stand
+	place  string        // which view they belong to
 	panel  desk.Panel    // of the last frame, to start a panel afresh
 }
 

@@ -2,6 +2,7 @@ package touch
 
 import (
 	"image"
+	"maps"
 	"time"
 
 	"gioui.org/io/event"
@@ -60,7 +61,7 @@ type clickState struct {
 	widget.Clickable
 	since   time.Time // when it was first seen pressed; zero: not pressed
 	repeats int
-	seen    bool
+	frame   int // when it was last shown
 }
 
 // Begin starts a frame: it runs what was touched since the last one and clears
@@ -72,6 +73,9 @@ func (b *Bench) Begin(gtx layout.Context, look *Look) {
 	}
 	b.runTouched()
 	b.frame++
+	if b.frame%512 == 0 {
+		b.forget()
+	}
 	size := gtx.Constraints.Max
 	area := drafting.Rect{X1: float64(size.X) / b.scale(), Y1: float64(size.Y) / b.scale()}
 	if b.Drawing == nil {
@@ -80,6 +84,13 @@ func (b *Bench) Begin(gtx layout.Context, look *Look) {
 	b.Drawing.Reset(area)
 	b.targets = b.targets[:0]
 	b.shade = drafting.Rect{}
+}
+
+// forget drops the state of targets that have not been shown for a while, so
+// that a day of work keeps no more memory than an hour.
+func (b *Bench) forget() {
+	maps.DeleteFunc(b.clicks, func(_ string, s *clickState) bool { return b.frame-s.frame > 256 })
+	maps.DeleteFunc(b.drags, func(_ string, s *dragState) bool { return b.frame-s.frame > 256 })
 }
 
 func (b *Bench) scale() float64 {
@@ -223,16 +234,19 @@ func (b *Bench) add(t target) {
 	b.targets = append(b.targets, t)
 }
 
-// Target names an area that does something when it is touched. The label is
-// what a screen reader says and what tests press.
-func (b *Bench) Target(box drafting.Rect, label string, do func()) {
-	b.targetAs(target{kind: clickTarget, key: label, label: label, box: box, do: do})
+// Target names an area that does something when it is touched. The key is its
+// identity from frame to frame, the label what a screen reader says and what
+// tests press; a label may hold a value that changes under the finger, a key
+// must not.
+func (b *Bench) Target(box drafting.Rect, key, label string, do func()) {
+	b.targetAs(target{kind: clickTarget, key: key, label: label, box: box, do: do})
 }
 
 func (b *Bench) targetAs(t target) {
 	if b.clicks[t.key] == nil {
 		b.clicks[t.key] = &clickState{}
 	}
+	b.clicks[t.key].frame = b.frame
 	b.add(t)
 }
 

@@ -101,7 +101,7 @@ func (b *Bench) chevron(r drafting.Rect, label string, dir drafting.Pt, able boo
 	ink := drafting.Ghost
 	if able {
 		ink = drafting.Line
-		b.Target(r, label, do)
+		b.Target(r, label, label, do)
 		b.Ring(label, r)
 	}
 	b.Chevron(r.Mid(), 22, dir, ink)

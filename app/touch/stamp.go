@@ -19,6 +19,7 @@ type Stamp struct {
 	Mark  Mark
 	Name  string
 	Text  string // figure against limit
+	Key   string // identity of the check
 	Label string
 	Do    func()
 }
@@ -41,8 +42,8 @@ func (b *Bench) Stamp(s Stamp) {
 	top.Y1, foot.Y0 = in.Mid().Y, in.Mid().Y
 	b.TextIn(top.Moved(0, 2), s.Name, drafting.Style{Size: b.Look.Small(), Bold: true, Ink: drafting.Line})
 	b.TextIn(foot.Moved(0, -4), s.Text, drafting.Style{Size: b.Look.Small(), Ink: drafting.Line})
-	b.Target(s.Box, s.Label, s.Do)
-	b.Ring(s.Label, s.Box)
+	b.Target(s.Box, "stamp "+s.Key, s.Label, s.Do)
+	b.Ring("stamp "+s.Key, s.Box)
 }
 
 func (b *Bench) markField(r drafting.Rect, m Mark) {

@@ -46,7 +46,7 @@ func TestStampsDifferWithoutColour(t *testing.T) {
 	seen := map[string]Mark{}
 	for _, m := range []Mark{Holds, Struck, Open} {
 		key := shape(drawn(func(b *Bench) {
-			b.Stamp(Stamp{Box: drafting.Rect{X0: 10, Y0: 10, X1: 250, Y1: 66}, Mark: m, Name: "Least f", Text: "680", Label: "Least f"})
+			b.Stamp(Stamp{Box: drafting.Rect{X0: 10, Y0: 10, X1: 250, Y1: 66}, Mark: m, Name: "Least f", Text: "680", Key: "f", Label: "Least f"})
 		}))
 		if other, ok := seen[key]; ok {
 			t.Errorf("mark %d looks like mark %d", m, other)
