@@ -100,6 +100,9 @@ func (u *UI) entryPieces(e desk.Entry) []piece {
 func figureText(f desk.Figure) string {
 	value := f.Value
 	if v, err := strconv.ParseFloat(value, 64); err == nil {
+		if f.Unit == "m" { // a rope: rounded outward
+			return capital(f.Name) + ": " + desk.SI.Outward(v) + " / " + desk.Customary.Outward(v)
+		}
 		value = desk.Significant(v, 4)
 	}
 	return strings.TrimSpace(capital(f.Name) + ": " + value + " " + unitText(f.Unit))
